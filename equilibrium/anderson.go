@@ -1,0 +1,129 @@
+package equilibrium
+
+import "math"
+
+// anderson speeds the fixed-point iteration y = g(y) of activity coefficients,
+// ln a_w and ln W by mixing the last few iterates (Anderson 1965, J. ACM 12,
+// 547; the least squares by normal equations, which are small and regularised).
+type anderson struct {
+	lnWater, lnMass float64
+
+	y, f         []float64 // this iterate and its residual g(y) − y
+	yLast, fLast []float64
+	dy, df       [andersonDepth][]float64
+	count, next  int
+	have         bool
+	matrix       [andersonDepth * andersonDepth]float64
+	theta        [andersonDepth]float64
+	best         float64
+}
+
+const andersonDepth = 5
+
+func (a *anderson) init(n int) {
+	a.y, a.f, a.yLast, a.fLast = make([]float64, n), make([]float64, n), make([]float64, n), make([]float64, n)
+	for i := range a.dy {
+		a.dy[i], a.df[i] = make([]float64, n), make([]float64, n)
+	}
+}
+
+func (a *anderson) reset() {
+	a.count, a.next, a.have, a.best = 0, 0, false, math.Inf(1)
+}
+
+// residual stores the iterate and its image and returns the largest difference.
+func (a *anderson) residual(gammas, image []float64, lnWater, lnMass float64) float64 {
+	n := len(gammas)
+	worst := 0.0
+	for i, g := range gammas {
+		a.y[i], a.f[i] = g, image[i]-g
+		worst = math.Max(worst, math.Abs(a.f[i]))
+	}
+	a.y[n], a.f[n] = a.lnWater, lnWater-a.lnWater
+	a.y[n+1], a.f[n+1] = a.lnMass, lnMass-a.lnMass
+	worst = math.Max(worst, math.Max(math.Abs(a.f[n]), math.Abs(a.f[n+1])))
+	if math.IsNaN(a.f[n]) || math.IsNaN(a.f[n+1]) {
+		return math.NaN()
+	}
+	return worst
+}
+
+// advance moves gammas, lnWater and lnMass to the next iterate. Without mixing it
+// is a damped step, slow and safe.
+func (a *anderson) advance(gammas []float64, mixing bool) {
+	n := len(a.y)
+	if !mixing {
+		for i := range a.y {
+			a.y[i] += 0.4 * a.f[i]
+		}
+		a.put(gammas)
+		return
+	}
+	if a.have {
+		dy, df := a.dy[a.next], a.df[a.next]
+		for i := 0; i < n; i++ {
+			dy[i], df[i] = a.y[i]-a.yLast[i], a.f[i]-a.fLast[i]
+		}
+		a.next = (a.next + 1) % andersonDepth
+		if a.count < andersonDepth {
+			a.count++
+		}
+	}
+	copy(a.yLast, a.y)
+	copy(a.fLast, a.f)
+	a.have = true
+	a.solveTheta()
+	longest := 0.0
+	for i := 0; i < n; i++ {
+		next := a.y[i] + a.f[i]
+		for j := 0; j < a.count; j++ {
+			next -= a.theta[j] * (a.dy[j][i] + a.df[j][i])
+		}
+		longest = math.Max(longest, math.Abs(next-a.y[i]))
+		a.y[i] = next
+	}
+	if longest > 3 || math.IsNaN(longest) { // a wild extrapolation: damped step, forget
+		for i := 0; i < n; i++ {
+			d := a.fLast[i] * 0.5
+			a.y[i] = a.yLast[i] + math.Max(-1.5, math.Min(d, 1.5))
+		}
+		a.count, a.next, a.have = 0, 0, false
+	}
+	a.put(gammas)
+}
+
+func (a *anderson) put(gammas []float64) {
+	n := len(gammas)
+	copy(gammas, a.y[:n])
+	a.lnWater = math.Min(a.y[n], 0.5)
+	a.lnMass = a.y[n+1]
+}
+
+// solveTheta minimises |f − Σ θ_j Δf_j|.
+func (a *anderson) solveTheta() {
+	m := a.count
+	if m == 0 {
+		return
+	}
+	for i := 0; i < m; i++ {
+		for j := 0; j <= i; j++ {
+			a.matrix[i*m+j] = dot(a.df[i], a.df[j])
+		}
+		a.theta[i] = dot(a.df[i], a.fLast)
+	}
+	for i := 0; i < m; i++ {
+		a.matrix[i*m+i] *= 1 + 1e-12
+		a.matrix[i*m+i] += 1e-300
+	}
+	cholesky(a.matrix[:m*m], m)
+	choleskySolve(a.matrix[:m*m], m, a.theta[:m])
+}
+
+func dot(a, b []float64) float64 {
+	sum := 0.0
+	b = b[:len(a)]
+	for i, v := range a {
+		sum += v * b[i]
+	}
+	return sum
+}

@@ -1,0 +1,578 @@
+package equilibrium
+
+import (
+	"errors"
+	"fmt"
+	"math"
+)
+
+// Solver finds the equilibrium of a System by minimising the dual
+//
+//	φ(λ) = Σ_i n_i(λ) − b·λ,   λ = ln activities of the components,
+//
+// under SI_p(λ) ≤ 0 for every allowed phase p; the multipliers are the moles of
+// p. A gas at a fixed pressure is an equality, a gas that may leave as bubbles
+// another inequality. φ is convex while activity coefficients γ, the activity of
+// water and its mass W are fixed, so Newton's method on the quadratic model with
+// the linear constraints (see quadratic) needs no starting guess; far steps are
+// shortened until φ plus a penalty for violated constraints falls. γ, a_w and W
+// follow in an outer iteration, speeded by Anderson's mixing (Anderson 1965,
+// J. ACM 12, 547).
+//
+// Totals are scaled to 1 kg of water; a component with less than 1e-22 mol/kg
+// counts as absent.
+//
+// A Solver owns its workspace: Solve allocates nothing and is not safe for
+// concurrent use. The zero value is not useful; call [System.NewSolver].
+type Solver struct {
+	sys *System
+
+	// constants at tempK
+	tempK, aphi    float64
+	lnKSpecies     []float64
+	lnKPhase       []float64
+	lnKGas         []float64
+	allowedDefault []bool
+
+	// the problem of this call, local numbering of active components
+	b        []float64 // mol per kg of total water, by component
+	active   []int32   // local -> component
+	local    []int32   // component -> local, -1 when absent
+	species  []int32   // active species
+	start    []int32   // of active species' rows below
+	row      []int32   // local component
+	nu       []float64 // its coefficient
+	cons     []constraint
+	rows     []float64 // constraint rows, dense over local components
+	rhs      []float64
+	wasSolid []bool
+
+	lambda, trial []float64 // local
+	n             []float64 // by active species
+	lnC           []float64 // ln K + water − ln γ + ln W by active species
+	gradient      []float64
+	hessian       []float64
+	step          []float64
+	quad          quadratic
+
+	mix     anderson
+	molal   []float64
+	gammas  []float64
+	charge  []float64 // scratch
+	newtons int
+}
+
+type constraintKind uint8
+
+const (
+	solidPhase constraintKind = iota
+	gasFixed
+	gasBubble
+)
+
+type constraint struct {
+	kind  constraintKind
+	index int     // phase or gas
+	water float64 // coefficient of ln a_w in the row
+	lnK   float64
+}
+
+// Errors of Solve. They are wrapped with the numbers.
+var (
+	ErrNoWater       = errors.New("no liquid water is left to dissolve in")
+	ErrNegativeTotal = errors.New("a component has a negative amount")
+	ErrNotConverged  = errors.New("the equilibrium did not converge")
+)
+
+const (
+	absentMolal = 1e-22
+	farStep     = 4.0  // longest change of a ln activity in one Newton step
+	nearStep    = 0.25 // below it a full Newton step needs no check
+	outerMost   = 250
+	innerMost   = 400
+	gammaTol    = 2e-11
+)
+
+// NewSolver returns a Solver for the system.
+func (s *System) NewSolver() *Solver {
+	nc, ns, np, ng := len(s.Components), len(s.Species), len(s.Phases), len(s.Gases)
+	most := np + ng
+	entries := len(s.species.component)
+	f := func(n int) []float64 { return make([]float64, n) }
+	sv := &Solver{
+		sys: s, lnKSpecies: f(ns), lnKPhase: f(np), lnKGas: f(ng), allowedDefault: make([]bool, np),
+		b: f(nc), active: make([]int32, 0, nc), local: make([]int32, nc),
+		species: make([]int32, 0, ns), start: make([]int32, 0, ns+1), row: make([]int32, 0, entries), nu: make([]float64, 0, entries),
+		cons: make([]constraint, 0, most), rows: f(most * nc), rhs: f(most), wasSolid: make([]bool, np),
+		lambda: f(nc), trial: f(nc), n: f(ns), lnC: f(ns), gradient: f(nc), hessian: f(nc * nc), step: f(nc),
+		molal: f(ns), gammas: f(ns), charge: f(ns),
+	}
+	sv.quad.init(nc, most)
+	sv.mix.init(ns + 2)
+	return sv
+}
+
+// Solve finds the equilibrium of totals (mol by component, solution and solids
+// together; the totals of H2O and H^+ included) under the conditions and writes
+// it to out. If out holds an earlier state of the same system, that is the warm
+// start. On an error out holds the last iterate and must not be used.
+func (sv *Solver) Solve(totals []float64, c *Conditions, out *State) error {
+	s := sv.sys
+	if len(totals) != len(s.Components) || len(out.Molality) != len(s.Species) {
+		panic("equilibrium: totals or state of another system")
+	}
+	if !(c.TempK > 200 && c.TempK < 500) {
+		return fmt.Errorf("temperature %.1f K is outside 200 to 500 K", c.TempK)
+	}
+	if err := sv.pose(totals, c); err != nil {
+		return err
+	}
+	scaleKg := totals[water] * waterMolarMass
+	sv.newtons = 0
+	err := ErrNotConverged
+	if out.seeded {
+		sv.warm(out, scaleKg)
+		err = sv.outer(true)
+	}
+	for _, mixing := range [...]bool{true, false} {
+		if err == nil || errors.Is(err, ErrNoWater) {
+			break
+		}
+		sv.cold()
+		err = sv.outer(mixing)
+	}
+	if err != nil {
+		out.seeded = false
+		return err
+	}
+	sv.report(totals, scaleKg, c, out)
+	return nil
+}
+
+// pose sets up constants, active components, species and constraints.
+func (sv *Solver) pose(totals []float64, c *Conditions) error {
+	s := sv.sys
+	if !(totals[water] > 0) || math.IsInf(totals[water], 0) {
+		return fmt.Errorf("%w: total of water is %g mol", ErrNoWater, totals[water])
+	}
+	scaleKg := totals[water] * waterMolarMass
+	for i, t := range totals {
+		if math.IsNaN(t) || math.IsInf(t, 0) {
+			return fmt.Errorf("total of %s is %g mol", s.Components[i].Name, t)
+		}
+		sv.b[i] = t / scaleKg
+		if i > proton && sv.b[i] < 0 {
+			if sv.b[i] < -1e-12 {
+				return fmt.Errorf("%w: %s %g mol", ErrNegativeTotal, s.Components[i].Name, t)
+			}
+			sv.b[i] = 0
+		}
+	}
+	if c.TempK != sv.tempK {
+		sv.tempK, sv.aphi = c.TempK, debyeHuckelAphi(c.TempK)
+		for i, sp := range s.Species {
+			sv.lnKSpecies[i] = ln10 * sp.LogK.At(c.TempK)
+		}
+		for i, p := range s.Phases {
+			sv.lnKPhase[i] = ln10 * p.LogK.At(c.TempK)
+		}
+		for i, g := range s.Gases {
+			sv.lnKGas[i] = ln10*g.LogK.At(c.TempK) - sv.lnKSpecies[s.gasSpecies[i]]
+		}
+		s.Ready(c.TempK, sv.allowedDefault)
+	}
+	for i := range sv.local {
+		sv.local[i] = -1
+	}
+	sv.active = sv.active[:0]
+	for i := proton; i < len(s.Components); i++ {
+		if i == proton || sv.b[i] > absentMolal {
+			sv.activate(i)
+		}
+	}
+	if c.GasBar != nil {
+		for g := range s.Gases {
+			if c.GasBar[g] > 0 {
+				row := &s.species
+				for k := row.start[s.gasSpecies[g]]; k < row.start[s.gasSpecies[g]+1]; k++ {
+					if i := int(row.component[k]); sv.local[i] < 0 {
+						sv.activate(i)
+					}
+				}
+			}
+		}
+	}
+	sv.species, sv.row, sv.nu = sv.species[:0], sv.row[:0], sv.nu[:0]
+	sv.start = append(sv.start[:0], 0)
+	for i := range s.Species {
+		if !sv.present(&s.species, i) {
+			continue
+		}
+		sv.species = append(sv.species, int32(i))
+		for k := s.species.start[i]; k < s.species.start[i+1]; k++ {
+			sv.row = append(sv.row, sv.local[s.species.component[k]])
+			sv.nu = append(sv.nu, s.species.coefficient[k])
+		}
+		sv.start = append(sv.start, int32(len(sv.row)))
+	}
+	sv.constrain(c)
+	return nil
+}
+
+func (sv *Solver) activate(component int) {
+	sv.local[component] = int32(len(sv.active))
+	sv.active = append(sv.active, int32(component))
+}
+
+func (sv *Solver) present(rows *sparse, i int) bool {
+	for k := rows.start[i]; k < rows.start[i+1]; k++ {
+		if sv.local[rows.component[k]] < 0 {
+			return false
+		}
+	}
+	return true
+}
+
+// constrain lists the fixed gases first: they are always in the working set.
+func (sv *Solver) constrain(c *Conditions) {
+	s := sv.sys
+	sv.cons = sv.cons[:0]
+	for g := range s.Gases {
+		if c.GasBar != nil && c.GasBar[g] > 0 && sv.present(&s.species, s.gasSpecies[g]) {
+			sv.addConstraint(gasFixed, g, &s.species, s.gasSpecies[g], s.speciesWater[s.gasSpecies[g]], sv.lnKGas[g]+math.Log(c.GasBar[g]))
+		}
+	}
+	sv.quad.equalities = len(sv.cons)
+	if c.BubbleBar > 0 {
+		for g := range s.Gases {
+			if (c.GasBar == nil || !(c.GasBar[g] > 0)) && sv.present(&s.species, s.gasSpecies[g]) {
+				sv.addConstraint(gasBubble, g, &s.species, s.gasSpecies[g], s.speciesWater[s.gasSpecies[g]], sv.lnKGas[g]+math.Log(c.BubbleBar))
+			}
+		}
+	}
+	allowed := c.Allowed
+	if allowed == nil {
+		allowed = sv.allowedDefault
+	}
+	for p := range s.Phases {
+		if allowed[p] && sv.present(&s.phases, p) {
+			sv.addConstraint(solidPhase, p, &s.phases, p, s.phaseWater[p], sv.lnKPhase[p])
+		}
+	}
+}
+
+func (sv *Solver) addConstraint(kind constraintKind, index int, rows *sparse, i int, water, lnK float64) {
+	n := len(sv.active)
+	at := len(sv.cons) * n
+	dense := sv.rows[at : at+n]
+	for k := range dense {
+		dense[k] = 0
+	}
+	for k := rows.start[i]; k < rows.start[i+1]; k++ {
+		dense[sv.local[rows.component[k]]] += rows.coefficient[k]
+	}
+	sv.cons = append(sv.cons, constraint{kind, index, water, lnK})
+}
+
+// cold is the start from nothing: every component as its free ion, neutral water.
+func (sv *Solver) cold() {
+	for k, c := range sv.active {
+		if sv.b[c] > absentMolal && c != proton {
+			sv.lambda[k] = math.Log(sv.b[c])
+		} else {
+			sv.lambda[k] = -7 * ln10
+		}
+	}
+	for i := range sv.gammas {
+		sv.gammas[i] = 0
+	}
+	sv.mix.reset()
+	sv.mix.lnWater, sv.mix.lnMass = 0, 0
+	sv.quad.working = sv.quad.working[:0]
+}
+
+// warm starts from an earlier state.
+func (sv *Solver) warm(st *State, scaleKg float64) {
+	for k, c := range sv.active {
+		sv.lambda[k] = st.LnActivity[c]
+		if math.IsInf(sv.lambda[k], 0) || math.IsNaN(sv.lambda[k]) {
+			sv.lambda[k] = math.Log(math.Max(sv.b[c], 1e-12))
+		}
+	}
+	copy(sv.gammas, st.LnGamma)
+	sv.mix.reset()
+	sv.mix.lnWater = st.LnActivity[water]
+	sv.mix.lnMass = math.Log(st.WaterKg / scaleKg)
+	if !(math.Abs(sv.mix.lnMass) < 1) {
+		sv.mix.lnMass = 0
+	}
+	sv.quad.working = sv.quad.working[:0]
+	for i, con := range sv.cons {
+		if i >= sv.quad.equalities && con.kind == solidPhase && st.SolidMol[con.index] > 0 {
+			sv.quad.working = append(sv.quad.working, int32(i))
+		}
+	}
+}
+
+// outer iterates γ, a_w and W around the minimisation.
+func (sv *Solver) outer(mixing bool) error {
+	s := sv.sys
+	change := 1.0
+	for k := 0; k < outerMost; k++ {
+		sv.prepare()
+		if err := sv.newton(math.Max(1e-7, math.Min(0.1, change*0.1))); err != nil {
+			return err
+		}
+		mass := math.Exp(sv.mix.lnMass)
+		for i := range sv.molal {
+			sv.molal[i] = 0
+		}
+		bound := 0.0 // water in species and solids, mol
+		for j, i := range sv.species {
+			sv.molal[i] = sv.n[j] / mass
+			bound += sv.n[j] * s.speciesWater[i]
+		}
+		for _, w := range sv.quad.working {
+			con := &sv.cons[w]
+			bound += sv.quad.x[w] * con.water
+		}
+		_, lnWater, _ := s.interactions.activity(sv.aphi, s.charge, sv.molal, sv.charge)
+		free := sv.b[water] - bound
+		lnMass := math.Log(math.Max(free*waterMolarMass, mass*0.5))
+		change = sv.mix.residual(sv.gammas, sv.charge, lnWater, lnMass)
+		if change < gammaTol {
+			return sv.newton(1e-7)
+		}
+		if sv.mix.lnMass < -9 {
+			return fmt.Errorf("%w: all of it is bound in solids", ErrNoWater)
+		}
+		if math.IsNaN(change) {
+			break
+		}
+		sv.mix.advance(sv.gammas, mixing)
+	}
+	return fmt.Errorf("%w after %d Newton steps; activity coefficients still move by %.2g", ErrNotConverged, sv.newtons, change)
+}
+
+// prepare puts γ, a_w and W into the constants of the minimisation.
+func (sv *Solver) prepare() {
+	s := sv.sys
+	for j, i := range sv.species {
+		sv.lnC[j] = sv.lnKSpecies[i] + s.speciesWater[i]*sv.mix.lnWater - sv.gammas[i] + sv.mix.lnMass
+	}
+	for i := range sv.cons {
+		con := &sv.cons[i]
+		sv.rhs[i] = con.lnK - con.water*sv.mix.lnWater
+	}
+}
+
+// evaluate sets n at λ and returns φ.
+func (sv *Solver) evaluate(lambda []float64) float64 {
+	phi := 0.0
+	for j := range sv.species {
+		e := sv.lnC[j]
+		for k := sv.start[j]; k < sv.start[j+1]; k++ {
+			e += sv.nu[k] * lambda[sv.row[k]]
+		}
+		n := math.Exp(math.Min(e, 250))
+		sv.n[j] = n
+		phi += n
+	}
+	for k, c := range sv.active {
+		phi -= sv.b[c] * lambda[k]
+	}
+	return phi
+}
+
+// derivatives sets gradient and Hessian of φ from n.
+func (sv *Solver) derivatives() {
+	m := len(sv.active)
+	h := sv.hessian[:m*m]
+	for i := range h {
+		h[i] = 0
+	}
+	for k, c := range sv.active {
+		sv.gradient[k] = -sv.b[c]
+	}
+	for j := range sv.species {
+		n := sv.n[j]
+		first, last := sv.start[j], sv.start[j+1]
+		for k := first; k < last; k++ {
+			r := int(sv.row[k])
+			v := sv.nu[k] * n
+			sv.gradient[r] += v
+			for l := first; l <= k; l++ {
+				q := int(sv.row[l])
+				if q <= r {
+					h[r*m+q] += v * sv.nu[l]
+				} else {
+					h[q*m+r] += v * sv.nu[l]
+				}
+			}
+		}
+	}
+}
+
+// newton minimises φ until a full step is below tol.
+func (sv *Solver) newton(tol float64) error {
+	m := len(sv.active)
+	lambda, trial := sv.lambda[:m], sv.trial[:m]
+	phi := sv.evaluate(lambda)
+	for k := 0; k < innerMost; k++ {
+		sv.newtons++
+		sv.derivatives()
+		if !sv.quad.solve(m, len(sv.cons), sv.hessian, sv.gradient, sv.rows, sv.rhs, lambda, sv.step) {
+			return fmt.Errorf("%w: the solids named cannot all be in balance", ErrNotConverged)
+		}
+		longest := 0.0
+		for _, d := range sv.step[:m] {
+			longest = math.Max(longest, math.Abs(d))
+		}
+		if math.IsNaN(longest) {
+			return fmt.Errorf("%w: numbers overflow", ErrNotConverged)
+		}
+		alpha := 1.0
+		if longest > farStep {
+			alpha = farStep / longest
+		}
+		if longest <= nearStep {
+			for i := range lambda {
+				lambda[i] += sv.step[i]
+			}
+			phi = sv.evaluate(lambda)
+			if longest < tol {
+				return nil
+			}
+			continue
+		}
+		before := phi + sv.penalty(lambda)
+		for try := 0; ; try++ {
+			for i := range trial {
+				trial[i] = lambda[i] + alpha*sv.step[i]
+			}
+			phi = sv.evaluate(trial)
+			if phi+sv.penalty(trial) <= before+1e-12*math.Abs(before) || try == 30 {
+				break
+			}
+			alpha *= 0.5
+		}
+		copy(lambda, trial)
+	}
+	return fmt.Errorf("%w within %d Newton steps", ErrNotConverged, innerMost)
+}
+
+// penalty makes φ an exact merit function: twice the multiplier (at least a
+// floor) times each violation.
+func (sv *Solver) penalty(lambda []float64) float64 {
+	m := len(lambda)
+	sum := 0.0
+	for i := range sv.cons {
+		v := -sv.rhs[i]
+		row := sv.rows[i*m : i*m+m]
+		for k, a := range row {
+			v += a * lambda[k]
+		}
+		if v > 0 || i < sv.quad.equalities {
+			sum += math.Abs(v) * (1e-3 + 2*math.Abs(sv.quad.x[i]))
+		}
+	}
+	return sum
+}
+
+// report writes the solution to out.
+func (sv *Solver) report(totals []float64, scaleKg float64, c *Conditions, out *State) {
+	s := sv.sys
+	mass := math.Exp(sv.mix.lnMass)
+	out.TempK = c.TempK
+	out.WaterKg = mass * scaleKg
+	out.Iterations = sv.newtons
+	for i := range out.LnActivity {
+		out.LnActivity[i] = math.Inf(-1)
+	}
+	for k, comp := range sv.active {
+		out.LnActivity[comp] = sv.lambda[k]
+	}
+	out.LnActivity[water] = sv.mix.lnWater
+	out.WaterActivity = math.Exp(sv.mix.lnWater)
+	out.PH = -out.LnActivity[proton] / ln10
+	copy(out.LnGamma, sv.gammas)
+	for i := range out.Molality {
+		out.Molality[i] = 0
+	}
+	for j, i := range sv.species {
+		out.Molality[i] = sv.n[j] / mass
+	}
+	ionic, osmotic, net, gross := 0.0, 0.0, 0.0, 0.0
+	for i, m := range out.Molality {
+		z := s.charge[i]
+		osmotic += m
+		ionic += 0.5 * m * z * z
+		net += m * z
+		gross += m * math.Abs(z)
+	}
+	out.IonicStrength, out.Osmotic = ionic, osmotic
+	out.ChargeError = 0
+	if gross > 0 {
+		out.ChargeError = math.Abs(net) / gross
+	}
+	for i := range out.SolidMol {
+		out.SolidMol[i] = 0
+	}
+	for g := range out.GasInMol {
+		out.GasInMol[g] = 0
+	}
+	for i, con := range sv.cons {
+		x := sv.quad.x[i] * scaleKg
+		switch {
+		case con.kind == solidPhase:
+			out.SolidMol[con.index] = math.Max(x, 0)
+		default:
+			out.GasInMol[con.index] = -x
+		}
+	}
+	for p := range s.Phases {
+		out.Index[p] = math.Inf(-1)
+		if sv.present(&s.phases, p) {
+			out.Index[p] = (s.phases.dot(p, out.LnActivity) + s.phaseWater[p]*sv.mix.lnWater - sv.lnKPhase[p]) / ln10
+		}
+	}
+	for g, i := range s.gasSpecies {
+		out.GasBar[g] = 0
+		if sv.present(&s.species, i) {
+			out.GasBar[g] = math.Exp(s.species.dot(i, out.LnActivity) + s.speciesWater[i]*sv.mix.lnWater - sv.lnKGas[g])
+		}
+	}
+	sv.balance(out, mass)
+	out.seeded = true
+}
+
+// balance measures how well the totals are met.
+func (sv *Solver) balance(out *State, mass float64) {
+	m := len(sv.active)
+	scale := sv.step[:m] // magnitudes
+	for k, c := range sv.active {
+		sv.gradient[k] = -sv.b[c]
+		scale[k] = math.Abs(sv.b[c])
+	}
+	for j := range sv.species {
+		for k := sv.start[j]; k < sv.start[j+1]; k++ {
+			v := sv.nu[k] * sv.n[j]
+			sv.gradient[sv.row[k]] += v
+			scale[sv.row[k]] = math.Max(scale[sv.row[k]], math.Abs(v))
+		}
+	}
+	for i := range sv.cons {
+		if x := sv.quad.x[i]; x != 0 {
+			for k, a := range sv.rows[i*m : i*m+m] {
+				sv.gradient[k] += a * x
+				scale[k] = math.Max(scale[k], math.Abs(a*x))
+			}
+		}
+	}
+	out.BalanceError = 0
+	for k := range scale {
+		if scale[k] > 0 {
+			out.BalanceError = math.Max(out.BalanceError, math.Abs(sv.gradient[k])/scale[k])
+		}
+	}
+}
