@@ -13,14 +13,20 @@ import "math"
 // and drops those that block; the dual objective rises at every step, so it
 // cannot cycle. Rows that depend on each other (two forms of one solid) are
 // exchanged, not added.
+//
+// A solid that holds nearly all of a metal leaves H with entries of 1e-25 beside a
+// gradient of 1e-5, and H⁻¹g would drown the answer in rounding. So the gradient
+// is taken with the multipliers of the last call put in (the shift), and only
+// their change is solved for.
 type quadratic struct {
 	equalities int
 	working    []int32   // constraints in the set, equalities first
 	x          []float64 // multipliers by constraint
+	shift      []float64 // part of x that is in the gradient already
 
 	factor []float64 // Cholesky factor of the scaled H
 	scale  []float64
-	base   []float64 // −H⁻¹g
+	base   []float64 // −L⁻¹S(g + Σ shift a)
 	normal []float64 // L⁻¹ a_i for each of the working set, row by row
 	schur  []float64
 	r, u   []float64
@@ -31,10 +37,18 @@ func (q *quadratic) init(n, constraints int) {
 	f := func(n int) []float64 { return make([]float64, n) }
 	most := n + 1
 	q.working = make([]int32, 0, constraints+1)
-	q.x = f(constraints)
+	q.x, q.shift = f(constraints), f(constraints)
 	q.factor, q.scale, q.base = f(n*n), f(n), f(n)
 	q.normal, q.schur = f(most*n), f(most*most)
 	q.r, q.u, q.z, q.v = f(most), f(most), f(n), f(n)
+}
+
+// forget empties the working set.
+func (q *quadratic) forget(constraints int) {
+	q.working = q.working[:0]
+	for i := range q.x[:constraints] {
+		q.x[i] = 0
+	}
 }
 
 // solve returns false when equalities contradict each other.
@@ -50,16 +64,18 @@ func (q *quadratic) solve(n, constraints int, h, g, rows, rhs, lambda, d []float
 		}
 	}
 	cholesky(l, n)
-	base := q.base[:n]
-	for i := range base {
-		base[i] = -g[i]
-	}
-	q.halfSolve(n, base)
-
 	q.working = mergeWorking(q.working, q.equalities, constraints, n)
+	for i := range q.shift[:constraints] {
+		q.shift[i] = 0
+	}
+	for _, w := range q.working {
+		q.shift[w] = q.x[w]
+	}
 	for i := range q.x[:constraints] {
 		q.x[i] = 0
 	}
+	q.shiftedBase(n, g, rows)
+	base := q.base[:n]
 	// Drop from the inherited set until no multiplier is negative.
 	for {
 		for k, w := range q.working {
@@ -71,7 +87,7 @@ func (q *quadratic) solve(n, constraints int, h, g, rows, rhs, lambda, d []float
 			if bad < q.equalities {
 				return false
 			}
-			q.working = append(q.working[:bad], q.working[bad+1:]...)
+			q.drop(n, bad, g, rows)
 			continue
 		}
 		m := len(q.working)
@@ -81,8 +97,9 @@ func (q *quadratic) solve(n, constraints int, h, g, rows, rhs, lambda, d []float
 		}
 		choleskySolve(q.schur[:m*m], m, q.u[:m])
 		worst, at := 0.0, -1
-		for k := q.equalities; k < m; k++ {
-			if q.u[k] < worst {
+		for k, w := range q.working {
+			q.u[k] += q.shift[w]
+			if k >= q.equalities && q.u[k] < worst {
 				worst, at = q.u[k], k
 			}
 		}
@@ -92,32 +109,89 @@ func (q *quadratic) solve(n, constraints int, h, g, rows, rhs, lambda, d []float
 			}
 			break
 		}
-		q.working = append(q.working[:at], q.working[at+1:]...)
+		q.drop(n, at, g, rows)
 	}
 	q.current(n, d)
 	for pass := 0; pass < 40*(constraints+1); pass++ {
 		worst, add := 0.0, -1
+		at := q.v[:n]
+		for k := range at {
+			at[k] = lambda[k] + d[k]
+		}
 		for i := q.equalities; i < constraints; i++ {
-			if q.inSet(i) {
-				continue
-			}
-			a := rows[i*n : i*n+n]
-			v := -rhs[i]
-			for k, c := range a {
-				v += c * (lambda[k] + d[k])
-			}
-			if v > 1e-11*(1+math.Abs(rhs[i])) && v > worst {
+			v := dot(rows[i*n:i*n+n], at) - rhs[i]
+			if v > worst && v > 1e-11*(1+math.Abs(rhs[i])) && !q.inSet(i) {
 				worst, add = v, i
 			}
 		}
 		if add < 0 {
+			q.polish(n, rows, rhs, lambda, d)
 			return true
 		}
-		if !q.add(n, add, rows, rhs, lambda, d) {
+		if !q.add(n, add, g, rows, rhs, lambda, d) {
 			return false
 		}
 	}
 	return true
+}
+
+// polish removes what rounding left of the residuals of the working set.
+func (q *quadratic) polish(n int, rows, rhs, lambda, d []float64) {
+	m := len(q.working)
+	for pass := 0; pass < 3 && m > 0; pass++ {
+		worst := 0.0
+		for k, w := range q.working {
+			v := -rhs[w]
+			for i, c := range rows[int(w)*n : int(w)*n+n] {
+				v += c * (lambda[i] + d[i])
+			}
+			q.u[k] = v
+			worst = math.Max(worst, math.Abs(v)/(1+math.Abs(rhs[w])))
+		}
+		if worst < 1e-13 {
+			return
+		}
+		choleskySolve(q.schur[:m*m], m, q.u[:m])
+		v := q.v[:n]
+		for i := range v {
+			v[i] = 0
+		}
+		for k := range q.working {
+			for i, a := range q.normal[k*n : k*n+n] {
+				v[i] -= q.u[k] * a
+			}
+		}
+		q.backSolve(n, v)
+		for i := range v {
+			d[i] += v[i]
+		}
+	}
+}
+
+// shiftedBase sets base from the gradient and the shifts.
+func (q *quadratic) shiftedBase(n int, g, rows []float64) {
+	base := q.base[:n]
+	for i := range base {
+		base[i] = -g[i]
+	}
+	for _, w := range q.working {
+		if s := q.shift[w]; s != 0 {
+			for k, a := range rows[int(w)*n : int(w)*n+n] {
+				base[k] -= s * a
+			}
+		}
+	}
+	q.halfSolve(n, base)
+}
+
+// drop takes the k-th constraint out of the inherited set.
+func (q *quadratic) drop(n, k int, g, rows []float64) {
+	w := q.working[k]
+	q.working = append(q.working[:k], q.working[k+1:]...)
+	if q.shift[w] != 0 {
+		q.shift[w] = 0
+		q.shiftedBase(n, g, rows)
+	}
 }
 
 // mergeWorking puts the equalities in front and keeps at most n constraints.
@@ -206,12 +280,13 @@ func (q *quadratic) factorSchur(n int) int {
 	return -1
 }
 
-// current sets d from the multipliers: H d = −g − Σ x a.
+// current sets d from the multipliers: H d = −g − Σ x a, of which base has the
+// shifts.
 func (q *quadratic) current(n int, d []float64) {
 	v := q.v[:n]
 	copy(v, q.base[:n])
 	for k, w := range q.working {
-		x := q.x[w]
+		x := q.x[w] - q.shift[w]
 		row := q.normal[k*n : k*n+n]
 		for i := range v {
 			v[i] -= x * row[i]
@@ -222,7 +297,7 @@ func (q *quadratic) current(n int, d []float64) {
 }
 
 // add brings constraint i into the set, dropping those that block.
-func (q *quadratic) add(n, i int, rows, rhs, lambda, d []float64) bool {
+func (q *quadratic) add(n, i int, g, rows, rhs, lambda, d []float64) bool {
 	a := rows[i*n : i*n+n]
 	for {
 		m := len(q.working)
@@ -281,7 +356,7 @@ func (q *quadratic) add(n, i int, rows, rhs, lambda, d []float64) bool {
 		gone := q.working[block]
 		q.x[gone] = 0
 		copy(q.normal[block*n:], q.normal[(block+1)*n:m*n])
-		q.working = append(q.working[:block], q.working[block+1:]...)
+		q.drop(n, block, g, rows)
 		q.factorSchur(n)
 		// d with the multiplier that i has so far.
 		v := q.v[:n]
@@ -293,8 +368,9 @@ func (q *quadratic) add(n, i int, rows, rhs, lambda, d []float64) bool {
 		}
 		for k, w := range q.working {
 			row := q.normal[k*n : k*n+n]
+			change := q.x[w] - q.shift[w]
 			for j := range v {
-				v[j] -= q.x[w] * row[j]
+				v[j] -= change * row[j]
 			}
 		}
 		q.backSolve(n, v)

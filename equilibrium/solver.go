@@ -35,17 +35,20 @@ type Solver struct {
 	allowedDefault []bool
 
 	// the problem of this call, local numbering of active components
-	b        []float64 // mol per kg of total water, by component
-	active   []int32   // local -> component
-	local    []int32   // component -> local, -1 when absent
-	species  []int32   // active species
-	start    []int32   // of active species' rows below
-	row      []int32   // local component
-	nu       []float64 // its coefficient
-	cons     []constraint
-	rows     []float64 // constraint rows, dense over local components
-	rhs      []float64
-	wasSolid []bool
+	b         []float64 // mol per kg of total water, by component
+	active    []int32   // local -> component
+	local     []int32   // component -> local, -1 when absent
+	species   []int32   // active species
+	start     []int32   // of active species' rows below
+	row       []int32   // local component
+	nu        []float64 // its coefficient
+	pairStart []int32   // of active species' products ν_c ν_d below
+	pairAt    []int32   // place in the Hessian
+	pair      []float64
+	cons      []constraint
+	rows      []float64 // constraint rows, dense over local components
+	rhs       []float64
+	wasSolid  []bool
 
 	lambda, trial []float64 // local
 	n             []float64 // by active species
@@ -86,23 +89,29 @@ var (
 
 const (
 	absentMolal = 1e-22
-	farStep     = 4.0  // longest change of a ln activity in one Newton step
+	ridge       = 1e-10
+	farStep     = 25.0 // longest change of a ln activity in one Newton step
 	nearStep    = 0.25 // below it a full Newton step needs no check
 	outerMost   = 250
 	innerMost   = 400
-	gammaTol    = 2e-11
+	gammaTol    = 1e-9
 )
 
 // NewSolver returns a Solver for the system.
 func (s *System) NewSolver() *Solver {
 	nc, ns, np, ng := len(s.Components), len(s.Species), len(s.Phases), len(s.Gases)
 	most := np + ng
-	entries := len(s.species.component)
+	entries, pairs := len(s.species.component), 0
+	for i := range s.Species {
+		k := int(s.species.start[i+1] - s.species.start[i])
+		pairs += k * (k + 1) / 2
+	}
 	f := func(n int) []float64 { return make([]float64, n) }
 	sv := &Solver{
 		sys: s, lnKSpecies: f(ns), lnKPhase: f(np), lnKGas: f(ng), allowedDefault: make([]bool, np),
 		b: f(nc), active: make([]int32, 0, nc), local: make([]int32, nc),
 		species: make([]int32, 0, ns), start: make([]int32, 0, ns+1), row: make([]int32, 0, entries), nu: make([]float64, 0, entries),
+		pairStart: make([]int32, 0, ns+1), pairAt: make([]int32, 0, pairs), pair: make([]float64, 0, pairs),
 		cons: make([]constraint, 0, most), rows: f(most * nc), rhs: f(most), wasSolid: make([]bool, np),
 		lambda: f(nc), trial: f(nc), n: f(ns), lnC: f(ns), gradient: f(nc), hessian: f(nc * nc), step: f(nc),
 		molal: f(ns), gammas: f(ns), charge: f(ns),
@@ -203,7 +212,8 @@ func (sv *Solver) pose(totals []float64, c *Conditions) error {
 		}
 	}
 	sv.species, sv.row, sv.nu = sv.species[:0], sv.row[:0], sv.nu[:0]
-	sv.start = append(sv.start[:0], 0)
+	sv.start, sv.pairStart = append(sv.start[:0], 0), append(sv.pairStart[:0], 0)
+	sv.pairAt, sv.pair = sv.pairAt[:0], sv.pair[:0]
 	for i := range s.Species {
 		if !sv.present(&s.species, i) {
 			continue
@@ -214,9 +224,26 @@ func (sv *Solver) pose(totals []float64, c *Conditions) error {
 			sv.nu = append(sv.nu, s.species.coefficient[k])
 		}
 		sv.start = append(sv.start, int32(len(sv.row)))
+		sv.addPairs(int(sv.start[len(sv.start)-2]), len(sv.row))
 	}
 	sv.constrain(c)
 	return nil
+}
+
+// addPairs lists the products of coefficients of one species for the Hessian.
+func (sv *Solver) addPairs(first, last int) {
+	m := int32(len(sv.active))
+	for k := first; k < last; k++ {
+		for l := first; l <= k; l++ {
+			r, q := sv.row[k], sv.row[l]
+			if q > r {
+				r, q = q, r
+			}
+			sv.pairAt = append(sv.pairAt, r*m+q)
+			sv.pair = append(sv.pair, sv.nu[k]*sv.nu[l])
+		}
+	}
+	sv.pairStart = append(sv.pairStart, int32(len(sv.pair)))
 }
 
 func (sv *Solver) activate(component int) {
@@ -288,7 +315,50 @@ func (sv *Solver) cold() {
 	}
 	sv.mix.reset()
 	sv.mix.lnWater, sv.mix.lnMass = 0, 0
-	sv.quad.working = sv.quad.working[:0]
+	sv.quad.forget(len(sv.cons))
+	sv.prepare()
+	sv.approach()
+}
+
+// approach brings a cold start near the balance of the solution without solids,
+// by the positive continuous fraction method (Carrayrou, Mosé and Behra 2002,
+// AIChE J. 48, 894): each component's activity is moved by the logarithm of what
+// is there over what should be, both sides kept positive.
+func (sv *Solver) approach() {
+	m := len(sv.active)
+	have, want, most := sv.gradient[:m], sv.step[:m], sv.trial[:m]
+	for sweep := 0; sweep < 60; sweep++ {
+		for k, c := range sv.active {
+			have[k], want[k], most[k] = math.Max(-sv.b[c], 0), math.Max(sv.b[c], 0), 1
+		}
+		sv.evaluate(sv.lambda[:m])
+		for j := range sv.species {
+			for k := sv.start[j]; k < sv.start[j+1]; k++ {
+				r, v := sv.row[k], sv.nu[k]
+				if v > 0 {
+					have[r] += v * sv.n[j]
+				} else {
+					want[r] -= v * sv.n[j]
+				}
+				if share := math.Abs(v); share > most[r] && sv.n[j]*share > 0.1*(have[r]+want[r]) {
+					most[r] = share
+				}
+			}
+		}
+		longest := 0.0
+		for k := range have {
+			move := 0.7 * math.Log(want[k]/have[k]) / most[k]
+			if math.IsNaN(move) || math.IsInf(move, 0) {
+				continue
+			}
+			move = math.Max(-30, math.Min(move, 30))
+			sv.lambda[k] += move
+			longest = math.Max(longest, math.Abs(move))
+		}
+		if longest < 0.3 {
+			return
+		}
+	}
 }
 
 // warm starts from an earlier state.
@@ -306,10 +376,11 @@ func (sv *Solver) warm(st *State, scaleKg float64) {
 	if !(math.Abs(sv.mix.lnMass) < 1) {
 		sv.mix.lnMass = 0
 	}
-	sv.quad.working = sv.quad.working[:0]
+	sv.quad.forget(len(sv.cons))
 	for i, con := range sv.cons {
 		if i >= sv.quad.equalities && con.kind == solidPhase && st.SolidMol[con.index] > 0 {
 			sv.quad.working = append(sv.quad.working, int32(i))
+			sv.quad.x[i] = st.SolidMol[con.index] / scaleKg
 		}
 	}
 }
@@ -320,7 +391,7 @@ func (sv *Solver) outer(mixing bool) error {
 	change := 1.0
 	for k := 0; k < outerMost; k++ {
 		sv.prepare()
-		if err := sv.newton(math.Max(1e-7, math.Min(0.1, change*0.1))); err != nil {
+		if err := sv.newton(math.Max(1e-7, math.Min(0.1, change))); err != nil {
 			return err
 		}
 		mass := math.Exp(sv.mix.lnMass)
@@ -374,7 +445,10 @@ func (sv *Solver) evaluate(lambda []float64) float64 {
 		for k := sv.start[j]; k < sv.start[j+1]; k++ {
 			e += sv.nu[k] * lambda[sv.row[k]]
 		}
-		n := math.Exp(math.Min(e, 250))
+		if e > 250 {
+			e = 250
+		}
+		n := math.Exp(e)
 		sv.n[j] = n
 		phi += n
 	}
@@ -384,7 +458,10 @@ func (sv *Solver) evaluate(lambda []float64) float64 {
 	return phi
 }
 
-// derivatives sets gradient and Hessian of φ from n.
+// derivatives sets gradient and Hessian of φ from n. The ridge bounds the step of
+// a component that is all but wholly in solids: there φ is flat to within the
+// rounding of its total, and the solids decide. It vanishes with the step, so the
+// balance reached is the true one.
 func (sv *Solver) derivatives() {
 	m := len(sv.active)
 	h := sv.hessian[:m*m]
@@ -393,22 +470,14 @@ func (sv *Solver) derivatives() {
 	}
 	for k, c := range sv.active {
 		sv.gradient[k] = -sv.b[c]
+		h[k*m+k] = ridge * math.Abs(sv.b[c])
 	}
-	for j := range sv.species {
-		n := sv.n[j]
-		first, last := sv.start[j], sv.start[j+1]
-		for k := first; k < last; k++ {
-			r := int(sv.row[k])
-			v := sv.nu[k] * n
-			sv.gradient[r] += v
-			for l := first; l <= k; l++ {
-				q := int(sv.row[l])
-				if q <= r {
-					h[r*m+q] += v * sv.nu[l]
-				} else {
-					h[q*m+r] += v * sv.nu[l]
-				}
-			}
+	for j, n := range sv.n[:len(sv.species)] {
+		for k := sv.start[j]; k < sv.start[j+1]; k++ {
+			sv.gradient[sv.row[k]] += sv.nu[k] * n
+		}
+		for k := sv.pairStart[j]; k < sv.pairStart[j+1]; k++ {
+			h[sv.pairAt[k]] += sv.pair[k] * n
 		}
 	}
 }
