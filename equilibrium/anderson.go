@@ -36,8 +36,14 @@ func (a *anderson) residual(gammas, image []float64, lnWater, lnMass float64) fl
 	n := len(gammas)
 	worst := 0.0
 	for i, g := range gammas {
-		a.y[i], a.f[i] = g, image[i]-g
-		worst = math.Max(worst, math.Abs(a.f[i]))
+		d := image[i] - g
+		a.y[i], a.f[i] = g, d
+		if d < 0 {
+			d = -d
+		}
+		if d > worst {
+			worst = d
+		}
 	}
 	a.y[n], a.f[n] = a.lnWater, lnWater-a.lnWater
 	a.y[n+1], a.f[n+1] = a.lnMass, lnMass-a.lnMass
@@ -79,7 +85,9 @@ func (a *anderson) advance(gammas []float64, mixing bool) {
 		for j := 0; j < a.count; j++ {
 			next -= a.theta[j] * (a.dy[j][i] + a.df[j][i])
 		}
-		longest = math.Max(longest, math.Abs(next-a.y[i]))
+		if move := math.Abs(next - a.y[i]); !(move <= longest) {
+			longest = move
+		}
 		a.y[i] = next
 	}
 	if longest > 3 || math.IsNaN(longest) { // a wild extrapolation: damped step, forget

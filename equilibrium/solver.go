@@ -52,17 +52,26 @@ type Solver struct {
 
 	lambda, trial []float64 // local
 	n             []float64 // by active species
-	lnC           []float64 // ln K + water − ln γ + ln W by active species
+	lnC, lnNext   []float64 // ln K + water − ln γ + ln W by active species
 	gradient      []float64
 	hessian       []float64
 	step          []float64
 	quad          quadratic
 
+	posed   pose
 	mix     anderson
 	molal   []float64
 	gammas  []float64
-	charge  []float64 // scratch
+	image   []float64 // γ of the molalities reached
 	newtons int
+}
+
+// pose is what the index tables were made for.
+type pose struct {
+	done             bool
+	tempK, bubbleBar float64
+	present, allowed []bool
+	gasBar           []float64
 }
 
 type constraintKind uint8
@@ -112,10 +121,11 @@ func (s *System) NewSolver() *Solver {
 		b: f(nc), active: make([]int32, 0, nc), local: make([]int32, nc),
 		species: make([]int32, 0, ns), start: make([]int32, 0, ns+1), row: make([]int32, 0, entries), nu: make([]float64, 0, entries),
 		pairStart: make([]int32, 0, ns+1), pairAt: make([]int32, 0, pairs), pair: make([]float64, 0, pairs),
-		cons: make([]constraint, 0, most), rows: f(most * nc), rhs: f(most), wasSolid: make([]bool, np),
-		lambda: f(nc), trial: f(nc), n: f(ns), lnC: f(ns), gradient: f(nc), hessian: f(nc * nc), step: f(nc),
-		molal: f(ns), gammas: f(ns), charge: f(ns),
+		cons: make([]constraint, 0, most), rows: f(most * nc), rhs: f(most),
+		lambda: f(nc), trial: f(nc), n: f(ns), lnC: f(ns), lnNext: f(ns), gradient: f(nc), hessian: f(nc * nc), step: f(nc),
+		molal: f(ns), gammas: f(ns), image: f(ns),
 	}
+	sv.posed = pose{present: make([]bool, nc), allowed: make([]bool, np), gasBar: f(ng)}
 	sv.quad.init(nc, most)
 	sv.mix.init(ns + 2)
 	return sv
@@ -190,6 +200,9 @@ func (sv *Solver) pose(totals []float64, c *Conditions) error {
 		}
 		s.Ready(c.TempK, sv.allowedDefault)
 	}
+	if sv.samePose(c) {
+		return nil
+	}
 	for i := range sv.local {
 		sv.local[i] = -1
 	}
@@ -228,6 +241,38 @@ func (sv *Solver) pose(totals []float64, c *Conditions) error {
 	}
 	sv.constrain(c)
 	return nil
+}
+
+// samePose tells whether the components present and the conditions are those of
+// the last call, so that its index tables serve again; it remembers them.
+func (sv *Solver) samePose(c *Conditions) bool {
+	p := &sv.posed
+	same := p.done && p.tempK == c.TempK && p.bubbleBar == c.BubbleBar
+	p.done, p.tempK, p.bubbleBar = true, c.TempK, c.BubbleBar
+	for i, b := range sv.b {
+		if present := b > absentMolal; present != p.present[i] {
+			p.present[i], same = present, false
+		}
+	}
+	allowed := c.Allowed
+	if allowed == nil {
+		allowed = sv.allowedDefault
+	}
+	for i, a := range allowed {
+		if a != p.allowed[i] {
+			p.allowed[i], same = a, false
+		}
+	}
+	for i := range p.gasBar {
+		bar := 0.0
+		if c.GasBar != nil && c.GasBar[i] > 0 {
+			bar = c.GasBar[i]
+		}
+		if bar != p.gasBar[i] {
+			p.gasBar[i], same = bar, false
+		}
+	}
+	return same
 }
 
 // addPairs lists the products of coefficients of one species for the Hessian.
@@ -316,7 +361,7 @@ func (sv *Solver) cold() {
 	sv.mix.reset()
 	sv.mix.lnWater, sv.mix.lnMass = 0, 0
 	sv.quad.forget(len(sv.cons))
-	sv.prepare()
+	sv.prepare(sv.lnC)
 	sv.approach()
 }
 
@@ -389,8 +434,13 @@ func (sv *Solver) warm(st *State, scaleKg float64) {
 func (sv *Solver) outer(mixing bool) error {
 	s := sv.sys
 	change := 1.0
+	sv.prepare(sv.lnC)
+	sv.evaluate(sv.lambda[:len(sv.active)])
 	for k := 0; k < outerMost; k++ {
-		sv.prepare()
+		if k > 0 {
+			sv.prepare(sv.lnNext)
+			sv.follow(nil, sv.lnNext)
+		}
 		if err := sv.newton(math.Max(1e-7, math.Min(0.1, change))); err != nil {
 			return err
 		}
@@ -407,11 +457,12 @@ func (sv *Solver) outer(mixing bool) error {
 			con := &sv.cons[w]
 			bound += sv.quad.x[w] * con.water
 		}
-		_, lnWater, _ := s.interactions.activity(sv.aphi, s.charge, sv.molal, sv.charge)
+		_, lnWater, _ := s.interactions.activity(sv.aphi, s.charge, sv.molal, sv.image)
 		free := sv.b[water] - bound
 		lnMass := math.Log(math.Max(free*waterMolarMass, mass*0.5))
-		change = sv.mix.residual(sv.gammas, sv.charge, lnWater, lnMass)
+		change = sv.mix.residual(sv.gammas, sv.image, lnWater, lnMass)
 		if change < gammaTol {
+			sv.evaluate(sv.lambda[:len(sv.active)]) // exactly, not by series
 			return sv.newton(1e-7)
 		}
 		if sv.mix.lnMass < -9 {
@@ -426,10 +477,10 @@ func (sv *Solver) outer(mixing bool) error {
 }
 
 // prepare puts γ, a_w and W into the constants of the minimisation.
-func (sv *Solver) prepare() {
+func (sv *Solver) prepare(lnC []float64) {
 	s := sv.sys
 	for j, i := range sv.species {
-		sv.lnC[j] = sv.lnKSpecies[i] + s.speciesWater[i]*sv.mix.lnWater - sv.gammas[i] + sv.mix.lnMass
+		lnC[j] = sv.lnKSpecies[i] + s.speciesWater[i]*sv.mix.lnWater - sv.gammas[i] + sv.mix.lnMass
 	}
 	for i := range sv.cons {
 		con := &sv.cons[i]
@@ -450,6 +501,41 @@ func (sv *Solver) evaluate(lambda []float64) float64 {
 		}
 		n := math.Exp(e)
 		sv.n[j] = n
+		phi += n
+	}
+	for k, c := range sv.active {
+		phi -= sv.b[c] * lambda[k]
+	}
+	return phi
+}
+
+// follow changes n for a step of λ and new constants lnNew, from the n at hand:
+// most changes are small, and a series costs less than an exponential. The error
+// is below 2e-14 relative a call.
+func (sv *Solver) follow(step []float64, lnNew []float64) {
+	for j, old := range sv.lnC[:len(sv.species)] {
+		e := 0.0
+		if lnNew != nil {
+			e = lnNew[j] - old
+			sv.lnC[j] = lnNew[j]
+		}
+		if step != nil {
+			for k := sv.start[j]; k < sv.start[j+1]; k++ {
+				e += sv.nu[k] * step[sv.row[k]]
+			}
+		}
+		if e < 5e-5 && e > -5e-5 {
+			sv.n[j] *= 1 + e*(1+0.5*e)
+		} else {
+			sv.n[j] *= math.Exp(e)
+		}
+	}
+}
+
+// value is φ from n at λ.
+func (sv *Solver) value(lambda []float64) float64 {
+	phi := 0.0
+	for _, n := range sv.n[:len(sv.species)] {
 		phi += n
 	}
 	for k, c := range sv.active {
@@ -482,11 +568,10 @@ func (sv *Solver) derivatives() {
 	}
 }
 
-// newton minimises φ until a full step is below tol.
+// newton minimises φ from the n at hand until a full step is below tol.
 func (sv *Solver) newton(tol float64) error {
 	m := len(sv.active)
 	lambda, trial := sv.lambda[:m], sv.trial[:m]
-	phi := sv.evaluate(lambda)
 	for k := 0; k < innerMost; k++ {
 		sv.newtons++
 		sv.derivatives()
@@ -508,19 +593,18 @@ func (sv *Solver) newton(tol float64) error {
 			for i := range lambda {
 				lambda[i] += sv.step[i]
 			}
-			phi = sv.evaluate(lambda)
+			sv.follow(sv.step[:m], nil)
 			if longest < tol {
 				return nil
 			}
 			continue
 		}
-		before := phi + sv.penalty(lambda)
+		before := sv.value(lambda) + sv.penalty(lambda)
 		for try := 0; ; try++ {
 			for i := range trial {
 				trial[i] = lambda[i] + alpha*sv.step[i]
 			}
-			phi = sv.evaluate(trial)
-			if phi+sv.penalty(trial) <= before+1e-12*math.Abs(before) || try == 30 {
+			if sv.evaluate(trial)+sv.penalty(trial) <= before+1e-12*math.Abs(before) || try == 30 {
 				break
 			}
 			alpha *= 0.5
