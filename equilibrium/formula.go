@@ -238,6 +238,9 @@ func (p *formulaParser) group(depth int) (map[string]float64, error) {
 				return nil, fmt.Errorf("bracket %q is not closed", string(c))
 			}
 			p.at++
+			if len(inner) == 0 {
+				return nil, fmt.Errorf("nothing between the brackets")
+			}
 			n, err := p.count()
 			if err != nil {
 				return nil, err
