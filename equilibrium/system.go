@@ -25,7 +25,8 @@ type System struct {
 	gasSpecies   []int
 	interactions interactions
 	volume       []float64 // infinite dilution, L/mol by species
-	hydrogen     int       // species index of H^+
+	volumeZ2     []float64 // charges that draw water together, see VolumeL
+	hydroxide    int       // species index of OH^-, -1 when absent
 }
 
 // The first components of every System.
@@ -70,7 +71,7 @@ func (s *sparse) dot(i int, lambda []float64) float64 {
 // NewSystem selects what the named components can form. H^+ and H2O are always
 // in. An unknown name is an error.
 func (db *Database) NewSystem(components []string) (*System, error) {
-	s := &System{Database: db, index: map[string]int{}}
+	s := &System{Database: db, index: map[string]int{}, hydroxide: -1}
 	names := []string{"H2O", "H^+"}
 	rest := append([]string{}, components...)
 	sort.Strings(rest)
@@ -94,13 +95,14 @@ func (db *Database) NewSystem(components []string) (*System, error) {
 		if !s.has(sp.Parts) {
 			continue
 		}
-		if sp.Name == "H^+" {
-			s.hydrogen = len(s.Species)
+		if sp.Name == "OH^-" {
+			s.hydroxide = len(s.Species)
 		}
 		s.Species = append(s.Species, sp)
 		s.charge = append(s.charge, sp.Charge)
 		s.speciesWater = append(s.speciesWater, s.species.add(sp.Parts, s.index))
-		s.volume = append(s.volume, db.ionVolumeL(sp))
+		volume, z2 := db.ionVolumeL(sp)
+		s.volume, s.volumeZ2 = append(s.volume, volume), append(s.volumeZ2, z2)
 	}
 	for _, p := range db.Phases {
 		if s.has(p.Parts) {
