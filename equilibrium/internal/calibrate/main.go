@@ -9,7 +9,8 @@
 //
 //	log10 K = c1 + c3/T + c4 log10 T     four points and more
 //	log10 K = c1 + c3/T                  two or three
-//	log10 K = value                      one; range that temperature alone
+//	log10 K = value                      one; range that temperature alone, with the
+//	                                     enthalpy of the row where it gives one
 //
 // by least squares. The rows marked check are never read here; the tests compare
 // with them. Run it from the equilibrium folder through go generate.
@@ -126,8 +127,20 @@ func calibrate(salt map[string]string, curves []map[string]string) ([]string, er
 	number := func(v float64, digits int) string {
 		return strconv.FormatFloat(v, 'f', digits, 64)
 	}
-	row := []string{salt["name"], salt["formula"], salt["synonyms"], salt["reaction"], number(at25, 4), "",
-		number(c1, 6), "", number(c3, 4), number(c4, 6), "", number(low, 1), number(high, 1),
+	enthalpy := ""
+	coefficients := [5]string{number(c1, 6), "", number(c3, 4), number(c4, 6), ""}
+	if len(points) == 1 && salt["enthalpy_kj_per_mol"] != "" {
+		// From one point along van 't Hoff to 25 °C.
+		kJ, err := strconv.ParseFloat(salt["enthalpy_kj_per_mol"], 64)
+		if err != nil {
+			return nil, err
+		}
+		enthalpy, coefficients = salt["enthalpy_kj_per_mol"], [5]string{}
+		at25 += kJ * 1000 / (equilibrium.GasConstant * math.Ln10) * (1/points[0].tempK - 1/298.15)
+	}
+	c := coefficients
+	row := []string{salt["name"], salt["formula"], salt["synonyms"], salt["reaction"], number(at25, 4), enthalpy,
+		c[0], c[1], c[2], c[3], c[4], number(low, 1), number(high, 1),
 		number(math.Max(0.02, 2*residual), 3), salt["forms"], salt["forms_above_c"], salt["density_g_cm3"],
 		"calibrated on " + joined(sources) + " with the activity model of package equilibrium",
 		"MEMORY; computed by internal/calibrate from the calibration rows of testdata/solubility.csv",
