@@ -284,8 +284,16 @@ func TestAssociationIsCountedOnce(t *testing.T) {
 			continue
 		}
 		pair := [2]string{s.Parts[0].Component, s.Parts[1].Component}
-		if p := epsilon[pair]; p != nil && pair[0] != "H^+" && p.Note == "" {
+		p := epsilon[pair]
+		if p == nil {
+			p = epsilon[[2]string{pair[1], pair[0]}]
+		}
+		switch {
+		case p == nil || p.Cation == "H^+": // an acid is no ion pair
+		case p.Note == "":
 			t.Errorf("%s is a species, and ε of %s %s is %g without a word why", s.Name, pair[0], pair[1], p.Epsilon)
+		case strings.Contains(p.Note, "besides"):
+			t.Errorf("%s is a species, and the row of %s %s says there is none", s.Name, pair[0], pair[1])
 		}
 	}
 }
