@@ -39,6 +39,11 @@ type Charged struct {
 	Hazards           []string
 	ImbalanceFraction float64 // of a water analysis: |cations − anions| / sum of both, before closing it
 	BalancedWith      string  // the ion that closed it
+
+	liquid      bool    // a solution or a liquor: it has a feed line
+	molPerKg    float64 // of the substance, 0 for mixtures
+	heatPerKgK  float64 // heat capacity, kJ/(kg K)
+	unavailable bool    // could not be resolved; a problem says why
 }
 
 // Step is what one step of the recipe did to one tank.
@@ -138,4 +143,6 @@ type Options struct {
 
 // Walk steps the recipe through its tanks. It returns a trace even when it has
 // problems, as far as it came.
-func Walk(r *recipe.Recipe, o Options) *Trace { panic("soon") }
+func Walk(r *recipe.Recipe, o Options) *Trace {
+	return walk(r, o, 0).tr
+}
