@@ -112,7 +112,7 @@ func (w *walker) sparged(s *recipe.Step) (air, bool) {
 			name = formula
 		}
 		a.fixed[name] = bar
-		for _, g := range w.sys.Gases {
+		for _, g := range w.db.Gases {
 			if g.Name == name {
 				return a, true
 			}
