@@ -28,6 +28,6 @@
 // trace.go (the types), walk.go and steps.go (the course of a batch), liquor.go
 // and mixing.go (contents of a tank and how they come to equilibrium),
 // transfer.go, titrate.go (adjust, make up, evaporate), gas.go, dissolve.go and
-// feed.go (what might have been); resolve.go, contents.go, names.go, waters.go
+// feed.go (what might have been); resolve.go, contents.go, names.go, waters.go, carbonate.go
 // and own.go turn materials into components.
 package trace

@@ -29,6 +29,7 @@ type batch struct {
 	from    map[string]float64
 	near    *equilibrium.State // a state not far off, for a warm start
 	heap    []float64          // solids by phase, for a tank that stays dry
+	trial   bool               // only looked at: Liquor.Clear is not wanted
 }
 
 // batchOf starts from the contents of a tank.
@@ -123,7 +124,7 @@ func (w *walker) settle(b *batch, a air) (*Liquor, []GasAmount, error) {
 		return l, nil, nil
 	}
 	l.Clear = l.State
-	if w.formed(l.State, b.present) {
+	if !b.trial && w.formed(l.State, b.present) {
 		c.Allowed = b.present
 		clear := w.sys.NewState()
 		clear.CopyFrom(l.State)

@@ -20,24 +20,16 @@ type content struct {
 
 // usual are names of analyses that leave a choice open, with the choice.
 var usual = map[string]struct{ species, note string }{
-	"Fe":    {"Fe^2+", "iron is taken as Fe^2+, write Fe^3+ when it is ferric"},
-	"Cr":    {"Cr^3+", "chromium is taken as Cr^3+, write CrO4 when it is chromate"},
-	"Mn":    {"Mn^2+", ""},
-	"P":     {"PO4^3-", ""},
-	"S":     {"SO4^2-", "sulfur is taken as sulfate"},
-	"Si":    {"H4SiO4(aq)", ""},
-	"SiO2":  {"H4SiO4(aq)", ""},
-	"B":     {"B(OH)3(aq)", ""},
-	"Mo":    {"MoO4^2-", ""},
-	"CO2":   {"", ""}, // below, whatever the tables call it
-	"OH":    {"", ""},
-	"H":     {"H^+", ""},
-	"HCO3":  {"", ""},
-	"HPO4":  {"", ""},
-	"H2PO4": {"", ""},
-	"HSO4":  {"", ""},
-	"HSO3":  {"", ""},
-	"NH3":   {"", ""},
+	"Fe":   {"Fe^2+", "iron is taken as Fe^2+, write Fe^3+ when it is ferric"},
+	"Cr":   {"Cr^3+", "chromium is taken as Cr^3+, write CrO4 when it is chromate"},
+	"Mn":   {"Mn^2+", ""},
+	"P":    {"PO4^3-", ""},
+	"S":    {"SO4^2-", "sulfur is taken as sulfate"},
+	"Si":   {"H4SiO4(aq)", ""},
+	"SiO2": {"H4SiO4(aq)", ""},
+	"B":    {"B(OH)3(aq)", ""},
+	"Mo":   {"MoO4^2-", ""},
+	"H":    {"H^+", ""},
 }
 
 // protonated are ions as a component with protons and water.

@@ -139,8 +139,8 @@ func ownLogK(at25 float64, enthalpyKJ *float64, table []recipe.TempPoint, uncert
 		low, high = math.Min(low, p.TempK), math.Max(high, p.TempK)
 	}
 	var x mat.VecDense
-	if err := x.SolveVec(a, b); err != nil && math.IsInf(x.AtVec(0), 0) {
-		return k, fmt.Errorf("the table against temperature gives no curve: %v", err)
+	if err := x.SolveVec(a, b); err != nil {
+		return k, fmt.Errorf("the table against temperature gives no curve, its temperatures must differ")
 	}
 	k.HasC = true
 	k.C[0], k.C[2] = x.AtVec(0), 1000*x.AtVec(1)

@@ -228,6 +228,9 @@ func (w *walker) draftSubstance(d *draft, name string) {
 			return
 		}
 		d.perMol = s.Parts
+		if sum := w.massOfParts(s.Parts); sum > 0 {
+			d.molarKg = sum // to the last digit what is put in, so that mass is kept
+		}
 		d.HeatKJPerKg = s.HeatKJPerMol / d.molarKg
 	} else if p, ok := w.db.LookupPhase(name); ok {
 		d.perMol, d.molarKg, formula = p.Parts, p.MolarMass/1000, p.Formula

@@ -212,8 +212,8 @@ func TestLiquorFromAnotherRecipe(t *testing.T) {
 	r := plan([]*recipe.Tank{tank("T-9", "closed")}, charge("mother liquor", kg(10)))
 	r.Liquors = []*recipe.LiquorFrom{{Name: "mother liquor", From: "first.recipe.hcl", Recipe: first, Tank: "T-1"}}
 	tr := walked(t, r)
-	if got, want := tr.end().Totals[tr.System.Index("Na^+")], 50/0.058443/105/10; !near(got*10/100, want/10, 1e-3) && !near(got, 10*5/105.0/0.05844, 1e-3) {
-		t.Errorf("%g mol of sodium", got)
+	if got, want := tr.end().Totals[tr.System.Index("Na^+")], 10*5/105.0/0.05844; !near(got, want, 1e-4) {
+		t.Errorf("%g mol of sodium, want %g", got, want)
 	}
 	r.Liquors[0].Tank = "T-7"
 	if bad := Walk(r, Options{}); len(bad.Problems) == 0 {
@@ -250,6 +250,27 @@ func TestOwnPhase(t *testing.T) {
 	r.Phases[0].Reaction = "NaCl = Na^+"
 	if bad := Walk(r, Options{}); len(bad.Problems) == 0 || !bad.Problems[0].Fatal {
 		t.Error("a reaction out of balance must be told")
+	}
+}
+
+func TestOwnConstantAgainstTemperature(t *testing.T) {
+	points := []recipe.TempPoint{{TempK: 278.15, Log10K: -2.2}, {TempK: 298.15, Log10K: -2}, {TempK: 338.15, Log10K: -1.7}}
+	k, err := ownLogK(0, nil, points[:2], 0.1)
+	if err != nil || math.Abs(k.At(278.15)+2.2) > 1e-9 || math.Abs(k.At(298.15)+2) > 1e-9 || math.Abs(k.At25C+2) > 1e-9 {
+		t.Errorf("two points: %v, %.6f and %.6f", err, k.At(278.15), k.At(298.15))
+	}
+	if _, err := ownLogK(0, nil, []recipe.TempPoint{points[0], points[0]}, 0.1); err == nil {
+		t.Error("one temperature twice is no curve")
+	}
+}
+
+func TestMolalContents(t *testing.T) {
+	r := plan(one("closed"), charge("brine", kg(1)))
+	r.Materials = []*recipe.Material{{Name: "brine", Density: q(1.1, recipe.Density), Contents: []recipe.Content{content1("NaCl", 2, recipe.Molality, "")}}}
+	tr := walked(t, r)
+	st := tr.end().State
+	if got := tr.end().Totals[tr.System.Index("Na^+")] / st.WaterKg; !near(got, 2, 1e-6) {
+		t.Errorf("%.7f mol/kg, want 2", got)
 	}
 }
 

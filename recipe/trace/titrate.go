@@ -11,9 +11,10 @@ import (
 const solvesMost = 60
 
 // with is the contents after kg of a material, as they stand and as they are read
-// (at another temperature, when one is given).
-func (w *walker) with(l *Liquor, c *Charged, kg float64, s *recipe.Step) (stands, read *Liquor, gas []GasAmount, err error) {
+// (at another temperature, when one is given). A trial leaves Liquor.Clear out.
+func (w *walker) with(l *Liquor, c *Charged, kg float64, s *recipe.Step, trial bool) (stands, read *Liquor, gas []GasAmount, err error) {
 	b := w.batchOf(l)
+	b.trial = trial
 	w.addMaterial(b, w.heatCapacity(l), c, kg)
 	stands, gas, err = w.settle(b, air{tank: s.Tank})
 	if err != nil {
@@ -22,7 +23,7 @@ func (w *walker) with(l *Liquor, c *Charged, kg float64, s *recipe.Step) (stands
 	read = stands
 	if s.ReadAt != nil && stands.wet() {
 		b := w.batchOf(stands)
-		b.tempK = s.ReadAt.Value
+		b.tempK, b.trial = s.ReadAt.Value, trial
 		read, _, err = w.settle(b, air{tank: s.Tank})
 	}
 	return stands, read, gas, err
@@ -56,13 +57,16 @@ func (w *walker) adjust(out *Step, s *recipe.Step) {
 	solves := 0
 	miss := func(kg float64) float64 {
 		solves++
-		stands, read, gas, err = w.with(out.Before, c, kg, s)
+		stands, read, gas, err = w.with(out.Before, c, kg, s, true)
 		if err != nil {
 			return math.NaN()
 		}
 		return read.State.PH - s.PH.Value
 	}
 	finish := func(kg float64, reached bool) {
+		if err == nil {
+			stands, read, gas, err = w.with(out.Before, c, kg, s, false)
+		}
 		if err != nil {
 			w.fail(s.Tank, out.At, out.What, err)
 			return
@@ -100,7 +104,6 @@ func (w *walker) adjust(out *Step, s *recipe.Step) {
 		kg := high
 		if math.Abs(missHigh) > math.Abs(missLow) { // the wrong way
 			kg = 0
-			miss(0)
 		}
 		finish(kg, false)
 		return
@@ -151,7 +154,7 @@ func (w *walker) makeUp(out *Step, s *recipe.Step) {
 	}
 	kg, lastKg, lastMiss := 0.0, 0.0, 0.0
 	for k := 0; ; k++ {
-		stands, read, gas, err := w.with(out.Before, c, kg, s)
+		stands, read, gas, err := w.with(out.Before, c, kg, s, true)
 		if err != nil {
 			w.fail(s.Tank, out.At, out.What, err)
 			return
