@@ -29,12 +29,14 @@ type batch struct {
 	from    map[string]float64
 	near    *equilibrium.State // a state not far off, for a warm start
 	heap    []float64          // solids by phase, for a tank that stays dry
+	liquid  bool               // there is some; solids alone stay a heap, whatever water their crystals hold
 	trial   bool               // only looked at: Liquor.Clear is not wanted
 }
 
 // batchOf starts from the contents of a tank.
 func (w *walker) batchOf(l *Liquor) *batch {
 	b := &batch{totals: append([]float64{}, l.Totals...), inertKg: l.InertKg, tempK: l.TempK,
+		liquid:  l.wet(),
 		present: make([]bool, len(w.sys.Phases)), from: maps.Clone(l.From), near: l.State, heap: append([]float64{}, l.State.SolidMol...)}
 	for _, s := range l.Solids {
 		b.present[s.Phase] = true
@@ -57,6 +59,7 @@ func (w *walker) addMaterial(b *batch, heatCapacity float64, c *Charged, kg floa
 		b.totals[w.sys.Index(p.Component)] += p.Coefficient * kg
 	}
 	b.inertKg += c.InertPerKg * kg
+	b.liquid = b.liquid || c.liquid
 	for _, p := range c.SolidPhases {
 		b.present[p] = true
 	}
@@ -81,6 +84,7 @@ func (w *walker) addLiquor(b *batch, heatCapacity float64, l *Liquor) float64 {
 		b.totals[i] += n
 	}
 	b.inertKg += l.InertKg
+	b.liquid = b.liquid || l.wet()
 	for _, s := range l.Solids {
 		b.present[s.Phase] = true
 		b.heap[s.Phase] += s.Mol
@@ -113,7 +117,11 @@ func (w *walker) settle(b *batch, a air) (*Liquor, []GasAmount, error) {
 		l.State.CopyFrom(b.near)
 	}
 	c := w.conditions(b.tempK, a, w.allow)
-	if err := w.solver.Solve(b.totals, &c, l.State); err != nil {
+	err := equilibrium.ErrNoWater
+	if b.liquid {
+		err = w.solver.Solve(b.totals, &c, l.State)
+	}
+	if err != nil {
 		if !errors.Is(err, equilibrium.ErrNoWater) {
 			return nil, nil, err
 		}
