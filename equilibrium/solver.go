@@ -36,6 +36,7 @@ type Solver struct {
 
 	// the problem of this call, local numbering of active components
 	b         []float64 // mol per kg of total water, by component
+	most      float64   // the largest of them, water left out
 	active    []int32   // local -> component
 	local     []int32   // component -> local, -1 when absent
 	species   []int32   // active species
@@ -153,11 +154,14 @@ func (sv *Solver) Solve(totals []float64, c *Conditions, out *State) error {
 		sv.warm(out, scaleKg)
 		err = sv.outer(true)
 	}
-	for _, mixing := range [...]bool{true, false} {
+	for attempt, mixing := range [...]bool{true, true, false} {
 		if err == nil || errors.Is(err, ErrNoWater) {
 			break
 		}
 		sv.cold()
+		if attempt > 0 {
+			sv.free()
+		}
 		err = sv.outer(mixing)
 	}
 	if err != nil {
@@ -199,6 +203,10 @@ func (sv *Solver) pose(totals []float64, c *Conditions) error {
 			sv.lnKGas[i] = ln10*g.LogK.At(c.TempK) - sv.lnKSpecies[s.gasSpecies[i]]
 		}
 		s.Ready(c.TempK, sv.allowedDefault)
+	}
+	sv.most = 0
+	for _, b := range sv.b[proton:] {
+		sv.most = math.Max(sv.most, math.Abs(b))
 	}
 	if sv.samePose(c) {
 		return nil
@@ -363,6 +371,18 @@ func (sv *Solver) cold() {
 	sv.quad.forget(len(sv.cons))
 	sv.prepare(sv.lnC)
 	sv.approach()
+}
+
+// free goes on from a cold start to the balance of the solution alone, without
+// solids and gases: where polynuclear species start out 1e20 times too many, the
+// constraints have no sense of scale yet.
+func (sv *Solver) free() {
+	cons, equalities := sv.cons, sv.quad.equalities
+	sv.cons, sv.quad.equalities = sv.cons[:0], 0
+	sv.evaluate(sv.lambda[:len(sv.active)])
+	_ = sv.newton(0.1) // as far as it comes
+	sv.cons, sv.quad.equalities = cons, equalities
+	sv.quad.forget(len(sv.cons))
 }
 
 // approach brings a cold start near the balance of the solution without solids,
@@ -557,6 +577,14 @@ func (sv *Solver) derivatives() {
 	for k, c := range sv.active {
 		sv.gradient[k] = -sv.b[c]
 		h[k*m+k] = ridge * math.Abs(sv.b[c])
+	}
+	// What a gas at fixed pressure brings may come to as much as anything there.
+	for i := range sv.cons[:sv.quad.equalities] {
+		for k, a := range sv.rows[i*m : i*m+m] {
+			if a != 0 {
+				h[k*m+k] = math.Max(h[k*m+k], ridge*sv.most)
+			}
+		}
 	}
 	for j, n := range sv.n[:len(sv.species)] {
 		for k := sv.start[j]; k < sv.start[j+1]; k++ {

@@ -249,8 +249,8 @@ func BenchmarkSolveDilute(b *testing.B) {
 	benchmarkSolve(b, 1)
 }
 
-// BenchmarkSolveStrong is the same water thirty times stronger.
-func BenchmarkSolveStrong(b *testing.B) {
+// BenchmarkSolveConcentrated is the same water thirty times stronger.
+func BenchmarkSolveConcentrated(b *testing.B) {
 	benchmarkSolve(b, 30)
 }
 
