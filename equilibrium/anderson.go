@@ -54,13 +54,13 @@ func (a *anderson) residual(gammas, image []float64, lnWater, lnMass float64) fl
 	return worst
 }
 
-// advance moves gammas, lnWater and lnMass to the next iterate. Without mixing it
-// is a damped step, slow and safe.
-func (a *anderson) advance(gammas []float64, mixing bool) {
+// advance moves gammas, lnWater and lnMass to the next iterate. With a damping it
+// is that part of a plain step, slow and safe.
+func (a *anderson) advance(gammas []float64, damping float64) {
 	n := len(a.y)
-	if !mixing {
+	if damping > 0 {
 		for i := range a.y {
-			a.y[i] += 0.4 * a.f[i]
+			a.y[i] += damping * a.f[i]
 		}
 		a.put(gammas)
 		return

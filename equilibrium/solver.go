@@ -152,9 +152,9 @@ func (sv *Solver) Solve(totals []float64, c *Conditions, out *State) error {
 	err := ErrNotConverged
 	if out.seeded {
 		sv.warm(out, scaleKg)
-		err = sv.outer(true)
+		err = sv.outer(0)
 	}
-	for attempt, mixing := range [...]bool{true, true, false} {
+	for attempt, damping := range [...]float64{0, 0, 0.4, 0.1} {
 		if err == nil || errors.Is(err, ErrNoWater) {
 			break
 		}
@@ -162,7 +162,7 @@ func (sv *Solver) Solve(totals []float64, c *Conditions, out *State) error {
 		if attempt > 0 {
 			sv.free()
 		}
-		err = sv.outer(mixing)
+		err = sv.outer(damping)
 	}
 	if err != nil {
 		out.seeded = false
@@ -450,13 +450,18 @@ func (sv *Solver) warm(st *State, scaleKg float64) {
 	}
 }
 
-// outer iterates γ, a_w and W around the minimisation.
-func (sv *Solver) outer(mixing bool) error {
+// outer iterates γ, a_w and W around the minimisation: with Anderson's mixing, or
+// with plain damping where the mixing runs in a ring between sets of solids.
+func (sv *Solver) outer(damping float64) error {
 	s := sv.sys
 	change := 1.0
 	sv.prepare(sv.lnC)
 	sv.evaluate(sv.lambda[:len(sv.active)])
-	for k := 0; k < outerMost; k++ {
+	most := outerMost
+	if damping > 0 {
+		most = int(outerMost / damping)
+	}
+	for k := 0; k < most; k++ {
 		if k > 0 {
 			sv.prepare(sv.lnNext)
 			sv.follow(nil, sv.lnNext)
@@ -491,7 +496,7 @@ func (sv *Solver) outer(mixing bool) error {
 		if math.IsNaN(change) {
 			break
 		}
-		sv.mix.advance(sv.gammas, mixing)
+		sv.mix.advance(sv.gammas, damping)
 	}
 	return fmt.Errorf("%w after %d Newton steps; activity coefficients still move by %.2g", ErrNotConverged, sv.newtons, change)
 }

@@ -74,7 +74,7 @@ func verify(t interface{ Errorf(string, ...any) }, s *System, totals []float64, 
 	}
 	for i := range sum {
 		tolerance := 1e-10*math.Max(size[i], math.Abs(totals[i])) + 1e-22*totals[water]
-		if math.Abs(sum[i]-totals[i]) > tolerance && !(i == water && math.Abs(sum[i]-totals[i]) < 1e-9*totals[i]) {
+		if math.Abs(sum[i]-totals[i]) > tolerance && !(i == water && math.Abs(sum[i]-totals[i]) < 2e-9*totals[i]) {
 			t.Errorf("%s: %.15g mol in the state, %.15g given", s.Components[i].Name, sum[i], totals[i])
 		}
 	}
