@@ -254,4 +254,5 @@ type Waiver struct {
 	Reference string
 	At        Range
 	Used      bool
+	Expired   bool // Until has passed: it waives nothing
 }
