@@ -5,6 +5,9 @@ import (
 	"dregs/recipe/trace"
 )
 
+// Caution ends every screen and file.
+const Caution = "This is a calculation, not a safety review. Before anything is charged, follow the site's safety procedures, local codes and the judgement of licensed practice."
+
 // Finding is data; renderers choose words and width.
 type Finding struct {
 	Code    string
@@ -16,7 +19,7 @@ type Finding struct {
 	Tank    string
 	At      recipe.Range
 
-	Phase       string // mineral name, "" when the finding is not of a solid
+	Phase       string  // mineral name, "" when the finding is not of a solid
 	Formula     string
 	AmountG     float64 // NaN when it has none
 	AmountGPerL float64
@@ -24,14 +27,18 @@ type Finding struct {
 	Uncertainty float64  // of the index
 	Probability float64  // 0..1, NaN
 	Onset       float64  // fraction of the step, NaN until it is computed
-	Limits      []string // what limits the amount, e.g. "SO₄²⁻ (98 % of it comes down)"
-	Evidence    []string // lines: model and its range, constants with source
+	Limits      []string // what limits the amount
+	Evidence    []string // model and its range, constants with source
 	Remedies    []Remedy
 	Waived      *recipe.Waiver
+
+	step  *trace.Step // where it is, for waivers and order; nil for the recipe
+	order int
 }
 
-// Remedy is a way out; Verified says that the walk was run again with it and the
-// finding was gone. Unverified ones are never printed.
+// Remedy is a way out; Verified says that the walk was run again with it, or the
+// equilibrium solved with it, and the finding was gone. Unverified ones are never
+// printed.
 type Remedy struct {
 	Text     string
 	Verified bool
@@ -51,15 +58,53 @@ type Pass struct {
 	Rule       *Rule
 	Trace      *trace.Trace
 	Thresholds *Thresholds
-	report     func(Finding)
+	findings   []Finding
 }
 
-// Report adds a finding; code, recipe and level are filled in when empty.
-func (p *Pass) Report(f Finding) {
-	p.report(f)
+// Report adds a finding; what the step and the phase say is filled in.
+func (p *Pass) Report(s *trace.Step, f Finding) {
+	if f.Code == "" {
+		f.Code = p.Rule.Code
+	}
+	if f.Level == 0 {
+		f.Level = p.Rule.Level
+	}
+	f.Recipe = p.Trace.Recipe.Name
+	f.step = s
+	if s != nil {
+		f.order = s.Index
+		f.Step = s.What
+		if s.Stage != nil {
+			f.Stage = s.Stage.Name
+		}
+		if f.Tank == "" && s.Tank != nil {
+			f.Tank = s.Tank.Name
+		}
+		if f.At.Line == 0 {
+			f.At = s.At
+		}
+	} else if f.At.Line == 0 {
+		f.At = p.Trace.Recipe.At
+	}
+	p.findings = append(p.findings, f)
 }
 
 // Thresholds are limits that a ruleset sets.
 type Thresholds struct {
-	HazeGPerL float64 // solid below this is a note
+	HazeGPerL       float64 // solid below this is a note
+	ZoneSparing     float64 // saturation index below which a sparingly soluble solid may stay away for a while
+	ZoneSoluble     float64 // the same for a very soluble salt
+	FeedIndex       float64 // peak index on the mixing line worth telling
+	DissolveMargin  float64 // fraction of its solubility that a charge should stay away from
+	AirGPerL        float64 // solid after meeting the air above which it is a caution
+	ImbalanceNote   float64 // of a water analysis
+	ImbalanceAlarm  float64
+	GasLitres       float64 // gas given off worth telling
+	Levels          map[string]recipe.Level
+}
+
+// Standard are the limits of the standard ruleset.
+func Standard() *Thresholds {
+	return &Thresholds{HazeGPerL: 0.005, ZoneSparing: 0.3, ZoneSoluble: 0.03, FeedIndex: 0.5, DissolveMargin: 0.05, AirGPerL: 0.3,
+		ImbalanceNote: 0.05, ImbalanceAlarm: 0.10, GasLitres: 1}
 }
