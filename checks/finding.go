@@ -19,7 +19,7 @@ type Finding struct {
 	Tank    string
 	At      recipe.Range
 
-	Phase       string  // mineral name, "" when the finding is not of a solid
+	Phase       string // mineral name, "" when the finding is not of a solid
 	Formula     string
 	AmountG     float64 // NaN when it has none
 	AmountGPerL float64
@@ -91,16 +91,16 @@ func (p *Pass) Report(s *trace.Step, f Finding) {
 
 // Thresholds are limits that a ruleset sets.
 type Thresholds struct {
-	HazeGPerL       float64 // solid below this is a note
-	ZoneSparing     float64 // saturation index below which a sparingly soluble solid may stay away for a while
-	ZoneSoluble     float64 // the same for a very soluble salt
-	FeedIndex       float64 // peak index on the mixing line worth telling
-	DissolveMargin  float64 // fraction of its solubility that a charge should stay away from
-	AirGPerL        float64 // solid after meeting the air above which it is a caution
-	ImbalanceNote   float64 // of a water analysis
-	ImbalanceAlarm  float64
-	GasLitres       float64 // gas given off worth telling
-	Levels          map[string]recipe.Level
+	HazeGPerL      float64 // solid below this is a note
+	ZoneSparing    float64 // saturation index below which a sparingly soluble solid may stay away for a while
+	ZoneSoluble    float64 // the same for a very soluble salt
+	FeedIndex      float64 // peak index on the mixing line worth telling
+	DissolveMargin float64 // fraction of its solubility that a charge should stay away from
+	AirGPerL       float64 // solid after meeting the air above which it is a caution
+	ImbalanceNote  float64 // of a water analysis
+	ImbalanceAlarm float64
+	GasLitres      float64 // gas given off worth telling
+	Levels         map[string]recipe.Level
 }
 
 // Standard are the limits of the standard ruleset.

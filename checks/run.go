@@ -7,8 +7,8 @@ import (
 	"dregs/recipe/trace"
 )
 
-// Run applies every rule to a trace. problems are those of reading that leave the
-// recipe usable; they become findings. The order is that of the recipe.
+// Run applies every rule to a trace. Problems that leave the recipe usable become
+// findings. The order is that of the recipe. A nil t is the standard ruleset.
 func Run(tr *trace.Trace, problems []recipe.Problem, t *Thresholds) []Finding {
 	if t == nil {
 		t = Standard()
@@ -19,11 +19,9 @@ func Run(tr *trace.Trace, problems []recipe.Problem, t *Thresholds) []Finding {
 		rule.Run(p)
 		out = append(out, p.findings...)
 	}
-	for _, list := range [][]recipe.Problem{problems, tr.Problems} {
-		for _, problem := range list {
-			if !problem.Fatal {
-				out = append(out, ofProblem(tr, problem))
-			}
+	for _, problem := range problems {
+		if !problem.Fatal {
+			out = append(out, ofProblem(tr, problem))
 		}
 	}
 	for i := range out {

@@ -105,10 +105,33 @@ func runUnplanned(p *Pass) {
 		}
 		f := p.ofSolid(n.phase, n.mol, n.liquor)
 		f.Tank = n.tank
-		f.Message = fmt.Sprintf("%s comes down %s: %s (%s)", f.Phase, doing(n.step), mass(f.AmountG), perLitre(f.AmountGPerL))
+		more := ""
+		if molOf(n.step.Before, n.phase) > 0 && n.tank == "" {
+			more = "more "
+		}
+		f.Message = fmt.Sprintf("%s%s comes down %s: %s (%s)", more, f.Phase, doing(n.step), mass(f.AmountG), perLitre(f.AmountGPerL))
 		p.byAmount(&f)
+		p.asDelivered(n, &f)
 		p.Report(n.step, f)
 	}
+}
+
+// asDelivered makes a note of what a water alone is oversaturated with: it came
+// clear through the main, so it will not cloud the tank.
+func (p *Pass) asDelivered(n newSolid, f *Finding) {
+	c := n.step.Charged
+	if c == nil || c.Water == nil || f.Index > 1 || n.tank != "" {
+		return
+	}
+	if b := n.step.Before; b != nil {
+		for name := range b.From {
+			if m := p.Trace.Materials[name]; m == nil || m.Water == nil {
+				return
+			}
+		}
+	}
+	f.Level = recipe.Note
+	f.Message = fmt.Sprintf("water %q is oversaturated with %s as it comes (%s); it will scale rather than cloud", c.Name, f.Phase, perLitre(f.AmountGPerL))
 }
 
 func runMild(p *Pass) {
@@ -120,6 +143,7 @@ func runMild(p *Pass) {
 		f.Tank = n.tank
 		f.Message = fmt.Sprintf("the liquor is oversaturated with %s %s and may stay clear for a while; in balance %s (%s) of it would come down", f.Phase, doing(n.step), mass(f.AmountG), perLitre(f.AmountGPerL))
 		p.byAmount(&f)
+		p.asDelivered(n, &f)
 		p.Report(n.step, f)
 	}
 }

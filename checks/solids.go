@@ -29,7 +29,9 @@ func (p *Pass) ofSolid(phase int, mol float64, l *trace.Liquor) Finding {
 	if l.SolutionL > 0 {
 		f.AmountGPerL = f.AmountG / l.SolutionL
 	}
-	if l.Clear != nil {
+	// Where the solid stood before, the liquor was in balance with it: there is no
+	// index of a clear liquor.
+	if l.Clear != nil && l.Clear.SolidMol[phase] == 0 {
 		f.Index = l.Clear.Index[phase]
 		f.Uncertainty = sys.IndexUncertainty(l.Clear, phase)
 		f.Probability = normal(f.Index / f.Uncertainty)
