@@ -108,8 +108,8 @@ func (p *Pass) meets(pair catalogue.Pair, s *trace.Step, other *trace.Charged, n
 	}
 	share := s.Before.From[name] / s.Before.MassKg
 	ph := s.Before.State.PH
-	into := hasClass(s.Charged.Hazards, pair.A) && hasClass(other.Hazards, pair.B)
-	reverse := hasClass(s.Charged.Hazards, pair.B) && hasClass(other.Hazards, pair.A)
+	into := is(s.Charged, pair.A) && is(other, pair.B)
+	reverse := is(s.Charged, pair.B) && is(other, pair.A)
 	if pair.Ordered {
 		// what is there must still be what it was: most of the tank
 		return into && share > 0.3
@@ -130,8 +130,13 @@ func (p *Pass) meets(pair catalogue.Pair, s *trace.Step, other *trace.Charged, n
 	return true
 }
 
-func hasClass(list []string, class string) bool {
-	for _, h := range list {
+// is tells whether a material belongs to a class. Waters are water although the
+// catalogue has no entry of them.
+func is(c *trace.Charged, class string) bool {
+	if class == "water" && c.Substance == nil && (c.Water != nil || c.Material == nil && len(c.Parts) == 1) {
+		return true
+	}
+	for _, h := range c.Hazards {
 		if h == class {
 			return true
 		}

@@ -85,7 +85,7 @@ var oxidised = []struct {
 	component, becomes string
 	abovePH            float64 // from where it goes within hours; common practice, no source
 }{
-	{"Fe^2+", "iron(III) hydroxide, far below the pH at which iron(II) comes down", 5},
+	{"Fe^2+", "iron(III) hydroxide, far below the pH at which iron(II) comes down", 6},
 	{"Mn^2+", "manganese oxides", 8.5},
 	{"SO3^2-", "sulfate", 4},
 	{"HS^-", "sulfur and thiosulfate", 6},

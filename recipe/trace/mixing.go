@@ -78,6 +78,50 @@ func (w *walker) addMaterial(b *batch, heatCapacity float64, c *Charged, kg floa
 	return heatCapacity + added
 }
 
+// heatOfWhatDissolves sets the temperature of a batch so that only the part of the
+// charge that dissolves there takes up or gives off its heat of solution:
+// addMaterial counted it for all of it. The part is found by halving, since more
+// dissolving makes it colder and colder liquors hold less.
+func (w *walker) heatOfWhatDissolves(out *Step, b *batch, capacity float64) {
+	c, kg := out.Charged, out.ChargedKg
+	if math.IsNaN(c.HeatKJPerKg) || c.HeatKJPerKg == 0 || c.molPerKg == 0 || len(c.SolidPhases) == 0 || capacity <= 0 || out.Before.MassKg == 0 {
+		return
+	}
+	whole := c.HeatKJPerKg * kg / capacity // K that all of it would take
+	none := b.tempK + whole
+	dissolves := func(part float64) float64 {
+		trial := *b
+		trial.totals = append([]float64{}, b.totals...)
+		trial.tempK = math.Max(none-whole*part, coldestK)
+		l, _, err := w.settle(&trial, air{tank: out.Tank})
+		if err != nil {
+			return part
+		}
+		left := 0.0
+		for _, p := range c.SolidPhases {
+			left += math.Max(l.solidMol(p)-out.Before.solidMol(p), 0)
+		}
+		return 1 - math.Min(left/out.ChargedMol, 1)
+	}
+	if dissolves(1) > 1-1e-9 {
+		return
+	}
+	low, high := 0.0, 1.0
+	for range 20 {
+		middle := (low + high) / 2
+		if dissolves(middle) > middle {
+			low = middle
+		} else {
+			high = middle
+		}
+	}
+	b.tempK = math.Max(none-whole*low, coldestK)
+}
+
+// coldestK is as cold as a batch is computed: water with salts may be a little
+// below 0 °C, the data end there.
+const coldestK = equilibrium.ZeroCelsius - 5
+
 // addLiquor mixes a liquor in.
 func (w *walker) addLiquor(b *batch, heatCapacity float64, l *Liquor) float64 {
 	for i, n := range l.Totals {

@@ -157,12 +157,13 @@ func (w *walker) charge(out *Step, s *recipe.Step) {
 	out.Charged, out.ChargedKg, out.ChargedMol = c, kg, kg*c.molPerKg
 	b := w.batchOf(out.Before)
 	before := b.tempK
-	w.addMaterial(b, w.heatCapacity(out.Before), c, kg)
-	if out.Before.MassKg > 0 {
-		out.TempRiseK = b.tempK - before
-	}
+	capacity := w.addMaterial(b, w.heatCapacity(out.Before), c, kg)
+	w.heatOfWhatDissolves(out, b, capacity)
 	if !w.keep(out, b, air{tank: out.Tank}) {
 		return
+	}
+	if out.Before.MassKg > 0 {
+		out.TempRiseK = b.tempK - before
 	}
 	w.undissolved(out)
 	if s.Kind == recipe.Dose {

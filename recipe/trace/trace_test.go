@@ -154,8 +154,8 @@ func TestOrderOfChargingDoesNotMatter(t *testing.T) {
 }
 
 func TestASolidThatRedissolvesLeavesNoTrace(t *testing.T) {
-	direct := walked(t, plan([]*recipe.Tank{tank("T-1", "closed")}, charge("water", kg(1000)), charge("CaCl2", kg(1)), charge("Na2SO4", kg(1))))
-	detour := walked(t, plan([]*recipe.Tank{tank("T-1", "closed")}, charge("water", kg(50)), charge("CaCl2", kg(1)), charge("Na2SO4", kg(1)), charge("water", kg(950))))
+	direct := walked(t, plan([]*recipe.Tank{tank("T-1", "closed")}, charge("water", kg(1000)), charge("CaCl2", kg(1)), charge("Na2SO4", kg(1)), &recipe.Step{Kind: recipe.Heat, To: celsius(25)}))
+	detour := walked(t, plan([]*recipe.Tank{tank("T-1", "closed")}, charge("water", kg(50)), charge("CaCl2", kg(1)), charge("Na2SO4", kg(1)), charge("water", kg(950)), &recipe.Step{Kind: recipe.Heat, To: celsius(25)}))
 	if len(detour.Steps[2].After.Solids) == 0 {
 		t.Fatal("nothing came down on the way")
 	}
