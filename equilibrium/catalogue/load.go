@@ -21,6 +21,7 @@ type book struct {
 	list      []*Substance // ordered by name
 	byFormula map[string]*Substance
 	byName    map[string]*Substance
+	stems     map[string][]*Substance // by names without the word that tells water or strength
 	names     []string
 }
 
@@ -64,6 +65,7 @@ func load(text string) (*book, error) {
 		}
 	}
 	b.order()
+	b.enterStems()
 	return b, nil
 }
 

@@ -127,3 +127,21 @@ var pairs = []Pair{
 
 // Pairs returns the table, in a fixed order.
 func Pairs() []Pair { return slices.Clone(pairs) }
+
+// Clashes returns the pairs of a substance that goes into another, by their
+// classes, at a temperature of the mix. Waters and plain liquors are of the class
+// "water". Of pairs that give the same only the first is returned.
+func Clashes(goesIn, into []string, tempC float64) []Pair {
+	var out []Pair
+	for _, p := range pairs {
+		there := slices.Contains(goesIn, p.A) && slices.Contains(into, p.B)
+		back := !p.Ordered && slices.Contains(goesIn, p.B) && slices.Contains(into, p.A)
+		if !there && !back || tempC < p.AboveC {
+			continue
+		}
+		if !slices.ContainsFunc(out, func(o Pair) bool { return o.Gives == p.Gives }) {
+			out = append(out, p)
+		}
+	}
+	return out
+}
