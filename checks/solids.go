@@ -237,14 +237,16 @@ func perLitre(gPerL float64) string {
 	return digits(gPerL) + " g/L"
 }
 
-// Ion writes Ca^2+ as Ca²⁺.
+var lowered = strings.NewReplacer("0", "₀", "1", "₁", "2", "₂", "3", "₃", "4", "₄", "5", "₅", "6", "₆", "7", "₇", "8", "₈", "9", "₉")
+
+// Ion writes SO4^2- as SO₄²⁻.
 func Ion(name string) string {
 	name = strings.TrimSuffix(name, "(aq)")
 	at := strings.IndexByte(name, '^')
 	if at < 0 {
-		return name
+		return lowered.Replace(name)
 	}
-	return name[:at] + strings.NewReplacer("0", "⁰", "1", "¹", "2", "²", "3", "³", "4", "⁴", "5", "⁵", "6", "⁶", "7", "⁷", "8", "⁸", "9", "⁹", "+", "⁺", "-", "⁻").Replace(name[at+1:])
+	return lowered.Replace(name[:at]) + strings.NewReplacer("0", "⁰", "1", "¹", "2", "²", "3", "³", "4", "⁴", "5", "⁵", "6", "⁶", "7", "⁷", "8", "⁸", "9", "⁹", "+", "⁺", "-", "⁻").Replace(name[at+1:])
 }
 
 // raise brings the level of a solid down to a note when it is a trace.
