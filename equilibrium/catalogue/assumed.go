@@ -2,6 +2,7 @@ package catalogue
 
 import (
 	"fmt"
+	"slices"
 	"sort"
 	"strings"
 )
@@ -20,7 +21,7 @@ func Assumed(name string) string {
 		return ""
 	}
 	var others []string
-	for _, o := range b.stems[key] {
+	for _, o := range b.stems()[key] {
 		if o.Formula != s.Formula || o.StrengthWt != s.StrengthWt {
 			others = append(others, o.Name)
 		}
@@ -52,20 +53,13 @@ func stemOf(key string) (string, bool) {
 	return "", false
 }
 
-// enterStems notes which names could have been meant by a shorter one.
-func (b *book) enterStems() {
-	b.stems = map[string][]*Substance{}
+// allStems tells which names could have been meant by a shorter one.
+func (b *book) allStems() map[string][]*Substance {
+	stems := map[string][]*Substance{}
 	for key, s := range b.byName {
-		stem, ok := stemOf(key)
-		if !ok {
-			continue
-		}
-		known := false
-		for _, o := range b.stems[stem] {
-			known = known || o == s
-		}
-		if !known {
-			b.stems[stem] = append(b.stems[stem], s)
+		if stem, ok := stemOf(key); ok && !slices.Contains(stems[stem], s) {
+			stems[stem] = append(stems[stem], s)
 		}
 	}
+	return stems
 }

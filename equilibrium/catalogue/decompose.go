@@ -203,7 +203,7 @@ func (d *decomposer) atoms(f equilibrium.Formula) error {
 		return d.valence(open, choices)
 	}
 	if math.Abs(d.charge) > 1e-9 {
-		return d.refuse("its charges do not balance with %s (off by %+g), so a valence or an oxidation state is in it that the tables do not hold, and redox is not computed", d.told(symbols), -d.charge)
+		return d.refuse("its charges do not balance: with %s they are off by %+.3g, so it holds a valence or an oxidation state that the tables lack, and redox is not computed", d.told(symbols), -d.charge)
 	}
 	return nil
 }
@@ -229,7 +229,7 @@ func (d *decomposer) valence(element string, choices []*equilibrium.Component) e
 		}
 		names = append(names, c.Name)
 	}
-	return d.refuse("the charge leaves %+g for each %s, which is neither %s: several valences, or one that the tables do not hold", d.charge/n, element, strings.Join(names, " nor "))
+	return d.refuse("the charge leaves %+.3g for each %s, which is neither %s: several valences, or one that the tables lack", d.charge/n, element, strings.Join(names, " nor "))
 }
 
 func (d *decomposer) unknown(element string) error {

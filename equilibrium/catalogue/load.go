@@ -5,6 +5,7 @@ import (
 	"encoding/csv"
 	"fmt"
 	"math"
+	"slices"
 	"sort"
 	"strconv"
 	"strings"
@@ -21,8 +22,8 @@ type book struct {
 	list      []*Substance // ordered by name
 	byFormula map[string]*Substance
 	byName    map[string]*Substance
-	stems     map[string][]*Substance // by names without the word that tells water or strength
-	names     []string
+	names     func() []string                // these two on first use: checking one recipe
+	stems     func() map[string][]*Substance // needs neither
 }
 
 // built is loaded on first use. A fault in the table panics: the tests of this
@@ -49,7 +50,7 @@ func load(text string) (*book, error) {
 	for i, name := range rows[0] {
 		column[name] = i
 	}
-	b := &book{byFormula: map[string]*Substance{}, byName: map[string]*Substance{}}
+	b := &book{byFormula: make(map[string]*Substance, 2*len(rows)), byName: make(map[string]*Substance, 4*len(rows))}
 	for _, row := range rows[1:] {
 		s, err := readSubstance(func(name string) string {
 			if i, ok := column[name]; ok {
@@ -64,8 +65,8 @@ func load(text string) (*book, error) {
 			return nil, fmt.Errorf("%q: %w", row[0], err)
 		}
 	}
-	b.order()
-	b.enterStems()
+	sort.Slice(b.list, func(i, j int) bool { return b.list[i].Name < b.list[j].Name })
+	b.names, b.stems = sync.OnceValue(b.allNames), sync.OnceValue(b.allStems)
 	return b, nil
 }
 
@@ -194,8 +195,8 @@ func (b *book) enterFormula(text string, s *Substance) {
 // isFormulaOf tells another writing of the formula (NaCH3COO) from a name that
 // happens to read like a formula (KHP): only the former has the same elements.
 func isFormulaOf(text string, s *Substance) bool {
-	if s.Formula == "" {
-		return false
+	if s.Formula == "" || strings.ContainsRune(text, ' ') || text[0] >= 'a' && text[0] <= 'z' {
+		return false // no formula, without parsing: most names
 	}
 	f, err := equilibrium.ParseFormula(text)
 	if err != nil {
@@ -213,17 +214,15 @@ func isFormulaOf(text string, s *Substance) bool {
 	return true
 }
 
-func (b *book) order() {
-	sort.Slice(b.list, func(i, j int) bool { return b.list[i].Name < b.list[j].Name })
-	seen := map[string]bool{}
+func (b *book) allNames() []string {
+	var names []string
 	for _, s := range b.list {
-		all := append([]string{s.Name, s.Formula}, s.Synonyms...)
-		for _, name := range all {
-			if name != "" && !seen[name] {
-				seen[name] = true
-				b.names = append(b.names, name)
-			}
+		names = append(names, s.Name)
+		if s.Formula != "" {
+			names = append(names, s.Formula)
 		}
+		names = append(names, s.Synonyms...)
 	}
-	sort.Strings(b.names)
+	sort.Strings(names)
+	return slices.Compact(names)
 }

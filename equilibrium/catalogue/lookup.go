@@ -22,7 +22,7 @@ func Lookup(name string) (*Substance, bool) {
 func All() []*Substance { return slices.Clone(built().list) }
 
 // Names returns every name, synonym and formula that Lookup takes, ordered.
-func Names() []string { return slices.Clone(built().names) }
+func Names() []string { return slices.Clone(built().names()) }
 
 // older spellings and ways to write a strength, folded into one.
 var spellings = strings.NewReplacer("sulph", "sulf", "aluminum", "aluminium", "cesium", "caesium",
@@ -30,6 +30,9 @@ var spellings = strings.NewReplacer("sulph", "sulf", "aluminum", "aluminium", "c
 
 func foldName(s string) string {
 	s = strings.Join(strings.Fields(strings.ToLower(s)), " ")
+	if !strings.ContainsAny(s, "-%(’") && !strings.Contains(s, "sulph") && !strings.Contains(s, "aluminum") && !strings.Contains(s, "cesium") {
+		return s // nothing to replace: most names
+	}
 	return strings.Join(strings.Fields(spellings.Replace(s)), " ")
 }
 
