@@ -226,7 +226,7 @@ func (p *Pass) expected(stage *recipe.Stage, e *recipe.Step, sys *equilibrium.Sy
 		f.Message = fmt.Sprintf("%s falls short: %s of what could form, %s or more is expected", ph.Name, percent(best/whole), percent(e.AtLeast.Value))
 	}
 	f.Phase, f.Formula, f.AmountG = ph.Name, ph.Formula, kg*1000
-	f.AmountGPerL = f.AmountG / where.After.SolutionL
+	f.AmountGPerL = f.AmountG / where.After.VolumeL
 	f.Limits = append(holds, fmt.Sprintf("pH %.1f, %.0f °C", where.After.State.PH, where.After.TempK-equilibrium.ZeroCelsius))
 	f.Evidence = p.evidence(phase, where.After.State)
 	p.Report(where, f)

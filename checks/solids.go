@@ -27,7 +27,7 @@ func (p *Pass) ofSolid(phase int, mol float64, l *trace.Liquor) Finding {
 	f.Phase, f.Formula = ph.Name, ph.Formula
 	f.AmountG = mol * ph.MolarMass
 	if l.SolutionL > 0 {
-		f.AmountGPerL = f.AmountG / l.SolutionL
+		f.AmountGPerL = f.AmountG / l.VolumeL // of the batch, solids included
 	}
 	// Where the solid stood before, the liquor was in balance with it: there is no
 	// index of a clear liquor.

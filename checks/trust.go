@@ -6,6 +6,7 @@ import (
 
 	"dregs/equilibrium"
 	"dregs/recipe"
+	"dregs/recipe/trace"
 )
 
 // runRange tells the first step of each tank that leaves the range of the model.
@@ -50,13 +51,40 @@ func runMissing(p *Pass) {
 		if s.Charged == nil || s.Charged.Substance == nil || s.Source == nil {
 			continue
 		}
-		if form := s.Charged.Substance.Form; len(s.Charged.SolidPhases) == 0 && len(s.Charged.Parts) > 0 && s.Charged.Substance.StrengthWt == 1 && (form == "crystals" || form == "powder" || form == "granules" || form == "flakes") && s.After != nil && s.ChargedKg/s.After.MassKg > 0.05 {
+		if form := s.Charged.Substance.Form; len(s.Charged.SolidPhases) == 0 && len(s.Charged.Parts) > 0 && s.Charged.Substance.StrengthWt == 1 && (form == "crystals" || form == "powder" || form == "granules" || form == "flakes") && s.After != nil && s.ChargedKg/s.After.MassKg > 0.05 && !p.hydrateKnown(s.Charged) {
 			f := blank()
 			f.Level = recipe.Note
 			f.Message = fmt.Sprintf("there are no solubility data of %s: it is taken to dissolve", s.Charged.Name)
 			p.Report(s, f)
 		}
 	}
+}
+
+// hydrateKnown tells whether some solid of the same salt has data: what stays
+// undissolved then stands as that.
+func (p *Pass) hydrateKnown(c *trace.Charged) bool {
+	dry := map[string]float64{}
+	for _, part := range c.Substance.Parts {
+		if part.Component != "H2O" {
+			dry[part.Component] += part.Coefficient
+		}
+	}
+	for _, ph := range p.Trace.System.Phases {
+		same := true
+		left := map[string]float64{}
+		for _, part := range ph.Parts {
+			if part.Component != "H2O" {
+				left[part.Component] += part.Coefficient
+			}
+		}
+		for name, n := range dry {
+			same = same && left[name] == n
+		}
+		if same && len(left) == len(dry) {
+			return true
+		}
+	}
+	return false
 }
 
 func runAnalysis(p *Pass) {
