@@ -16,12 +16,15 @@ type near struct {
 	slow               bool
 }
 
-// farthest is the saturation index below which a solid is of no interest to a
-// reader of a screen; programs get all of them.
-const farthest = -4
+// Saturation indices below which a solid is of no interest to a reader of a
+// screen; programs get all of them.
+const (
+	farthest     = -4
+	farthestSlow = -0.5
+)
 
 // closest lists the solids nearest to saturation that are not there, the nearest
-// first: those that form readily, then, marked, slow ones past saturation.
+// first: those that form readily, then, marked, slow ones near saturation.
 func closest(sys *equilibrium.System, l *trace.Liquor, most int) []near {
 	if l == nil || l.State == nil || l.State.WaterKg <= 0 {
 		return nil
@@ -31,7 +34,7 @@ func closest(sys *equilibrium.System, l *trace.Liquor, most int) []near {
 	var out []near
 	for p, phase := range sys.Phases {
 		index := l.State.Index[p]
-		if l.State.SolidMol[p] > 0 || math.IsInf(index, 0) || index < farthest || !ready[p] && index < 0 {
+		if l.State.SolidMol[p] > 0 || math.IsInf(index, 0) || index < farthest || !ready[p] && index < farthestSlow {
 			continue
 		}
 		out = append(out, near{phase.Name, phase.Formula, index, sys.IndexUncertainty(l.State, p), !ready[p]})

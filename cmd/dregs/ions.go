@@ -24,3 +24,13 @@ func ionText(formula string) string {
 	}
 	return text
 }
+
+var chargedWord = regexp.MustCompile(`[A-Z][A-Za-z0-9()]*[⁰¹²³⁴⁵⁶⁷⁸⁹]*[⁺⁻]`)
+
+// ionsInText lowers the counts of the ions within a sentence (SO4²⁻); other words
+// with digits may be names.
+func ionsInText(text string) string {
+	return chargedWord.ReplaceAllStringFunc(text, func(ion string) string {
+		return counts.ReplaceAllStringFunc(ion, func(s string) string { return s[:1] + lowered.Replace(s[1:]) })
+	})
+}

@@ -24,6 +24,7 @@ type verdict struct {
 	model    string           // of the activity coefficients
 	closest  string           // the solid nearest to coming down, over all steps
 	steps    map[recipe.Range]stepNote
+	input    []byte // what standard input held
 }
 
 func (v *verdict) usable() bool { return len(v.faults) == 0 }
@@ -56,6 +57,7 @@ func (c *call) load(path string, o recipe.Options) *verdict {
 			v.faults = []recipe.Problem{{Code: "RCP-01", Level: recipe.Stop, Fatal: true, Message: "standard input cannot be read", At: recipe.Range{File: path}}}
 			return v
 		}
+		v.input = text
 		v.recipe, problems = recipe.LoadBytes(path, text, o)
 	} else {
 		v.recipe, problems = recipe.Load(path, o)

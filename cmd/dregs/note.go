@@ -3,6 +3,8 @@ package main
 import (
 	"fmt"
 	"math"
+	"os"
+	"strings"
 
 	"dregs/checks"
 	"dregs/equilibrium"
@@ -22,17 +24,53 @@ func (v *verdict) note() {
 	v.model = v.trace.System.ModelName()
 	v.closest = closestOfAll(v.trace)
 	v.steps = map[recipe.Range]stepNote{}
+	var source []string
 	for _, f := range v.findings {
 		if s := stepOf(v.trace, f); s != nil {
 			v.steps[f.At] = stepNote{text: writtenStep(s), tank: s.Tank.Name, state: stateText(s.After)}
+			continue
+		}
+		if f.At.File != v.file || f.At.Line == 0 {
+			continue
+		}
+		if source == nil {
+			source = v.sourceLines()
+		}
+		if f.At.Line <= len(source) {
+			v.steps[f.At] = stepNote{text: withoutRemark(source[f.At.Line-1])}
 		}
 	}
 }
 
-// stepOf finds the step that a finding belongs to: the one whose place is the
-// last at or before it, in the same stage.
+// sourceLines are the lines of the recipe, for findings that belong to no step.
+func (v *verdict) sourceLines() []string {
+	text := v.input
+	if text == nil {
+		text, _ = os.ReadFile(v.file)
+	}
+	return strings.Split(string(text), "\n")
+}
+
+// withoutRemark is a line of a recipe without its remark and margins.
+func withoutRemark(line string) string {
+	if text, remark, ok := strings.Cut(line, " #"); ok && !strings.Contains(remark, "\"") {
+		line = text
+	}
+	return strings.Join(strings.Fields(line), " ")
+}
+
+// stepOf finds the step that a finding belongs to: the one at its very place, or
+// the last one before it in the same stage.
 func stepOf(tr *trace.Trace, f checks.Finding) *trace.Step {
 	var best *trace.Step
+	for _, s := range tr.Steps {
+		if s.At == f.At && s.Tank != nil {
+			return s
+		}
+	}
+	if f.Stage == "" {
+		return nil
+	}
 	for _, s := range tr.Steps {
 		stage := ""
 		if s.Stage != nil {
@@ -40,9 +78,6 @@ func stepOf(tr *trace.Trace, f checks.Finding) *trace.Step {
 		}
 		if stage != f.Stage || s.At.File != f.At.File || s.At.Byte > f.At.Byte || s.Tank == nil {
 			continue
-		}
-		if f.Stage == "" && s.At.Byte != f.At.Byte {
-			continue // before the stages only the step itself
 		}
 		if best == nil || s.At.Byte > best.At.Byte {
 			best = s

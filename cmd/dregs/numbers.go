@@ -68,6 +68,14 @@ func massText(massG float64) string {
 	return figures(massG*1000, 3) + " mg"
 }
 
+// strengthText writes grams in a litre.
+func strengthText(gPerL float64) string {
+	if math.Abs(gPerL) < 0.1 {
+		return figures(1000*gPerL, 3) + " mg/L"
+	}
+	return figures(gPerL, 3) + " g/L"
+}
+
 // indexText writes a saturation index with its uncertainty.
 func indexText(index, uncertainty float64) string {
 	if math.IsNaN(index) || math.IsInf(index, 0) {

@@ -44,10 +44,11 @@ should not, what should come out and does not, and how close it is.`,
 		Example: `  dregs check examples                   findings of all recipes in a folder
   dregs sheet rinse.recipe.hcl           the batch, stage by stage
   dregs beaker "1 kg water" "3 g CaSO4.2H2O" --at "25 degC"`,
-		Version:           version,
-		SilenceErrors:     true,
-		SilenceUsage:      true,
-		PersistentPreRunE: func(*cobra.Command, []string) error { return oneOf("--colour", c.colour, "auto", "always", "never") },
+		Version:               version,
+		SilenceErrors:         true,
+		SilenceUsage:          true,
+		DisableFlagsInUseLine: true,
+		PersistentPreRunE:     func(*cobra.Command, []string) error { return oneOf("--colour", c.colour, "auto", "always", "never") },
 		RunE: func(cmd *cobra.Command, arguments []string) error {
 			if len(arguments) == 0 {
 				return cmd.Help()
@@ -69,10 +70,17 @@ should not, what should come out and does not, and how close it is.`,
 		return verb.Help()
 	}})
 	root.AddCommand(c.checkVerb(), c.sheetVerb(), c.beakerVerb(), c.whyVerb(), c.dataVerb())
+	root.InitDefaultCompletionCmd()
+	for _, verb := range root.Commands() {
+		verb.DisableFlagsInUseLine = true
+		if verb.Name() == "completion" {
+			verb.Short = "prints a script that completes verbs and options in a shell"
+		}
+	}
 	return root
 }
 
-const usageTemplate = `{{if .Runnable}}call     {{.UseLine}}
+const usageTemplate = `{{if .Runnable}}call     {{.UseLine}} [options]
 {{end}}{{if .HasAvailableSubCommands}}
 verbs
 {{range .Commands}}{{if .IsAvailableCommand}}  {{rpad .Name 12}} {{.Short}}

@@ -104,7 +104,7 @@ func (p *page) dissolved(m *mix) {
 	p.line()
 	var rows [][]string
 	for _, d := range list {
-		rows = append(rows, []string{d.name, ionText(d.formula), massText(d.chargedG), massText(d.goneG()), massText(d.goneG()/d.litres) + "/L", orWord(d.leftG, "nothing")})
+		rows = append(rows, []string{d.name, ionText(d.formula), massText(d.chargedG), massText(d.goneG()), strengthText(d.goneG() / d.litres), orWord(d.leftG, "nothing")})
 	}
 	p.table(0, []column{{head: "charged solid"}, {head: "as", drop: 1}, {head: "charged", right: true}, {head: "dissolved", right: true}, {head: "per L of solution", right: true}, {head: "stays", right: true}}, rows)
 	p.line()

@@ -43,9 +43,11 @@ func (p *page) recipe(v *verdict) {
 			at, open = f.At, true
 			p.step(v, f)
 		}
-		p.finding(f)
+		p.finding(f, v.model)
 	}
-	p.rule("─")
+	if len(v.findings) > 0 {
+		p.rule("─")
+	}
 	p.verdictLine(v)
 	p.line()
 }
@@ -84,6 +86,7 @@ func inReadingOrder(v *verdict) []checks.Finding {
 
 const (
 	marginWidth = 9  // where lines and levels stand
+	codeWidth   = 10 // of a finding's code
 	labelWidth  = 13 // of a finding's figures
 )
 
@@ -103,19 +106,25 @@ func (p *page) step(v *verdict, f checks.Finding) {
 	}
 	p.hang(0, margin, marginWidth, note.text, p.strong)
 	if note.state != "" {
-		p.hang(marginWidth, "", 0, note.tank+" then: "+note.state, nil)
+		p.hang(marginWidth, note.tank+" after it", length(note.tank)+11, note.state, p.faint)
 	}
 }
 
 // finding prints the sentence and, under it, the figures it rests on.
-func (p *page) finding(f checks.Finding) {
+func (p *page) finding(f checks.Finding, model string) {
 	p.line()
 	level := f.Level.String()
 	ink := p.ink(f.Level)
 	if f.Waived != nil {
 		level, ink = "waived", p.faint
 	}
-	p.hang(0, level, marginWidth, f.Code+"  "+f.Message, ink)
+	for i, text := range wrap(ionsInText(f.Message), p.width-marginWidth-codeWidth) {
+		margin := strings.Repeat(" ", marginWidth+codeWidth)
+		if i == 0 {
+			margin = ink.Sprint(level) + strings.Repeat(" ", marginWidth-len(level)) + pad(f.Code, codeWidth)
+		}
+		p.line(margin, text)
+	}
 	row := func(label, text string) {
 		if text != "" {
 			p.hang(marginWidth, label, labelWidth, text, p.faint)
@@ -138,15 +147,15 @@ func (p *page) finding(f checks.Finding) {
 	if !math.IsNaN(f.Onset) {
 		row("begins", fmt.Sprintf("at %s %% of the step", fixed(100*f.Onset, 0)))
 	}
-	row("limited by", strings.Join(f.Limits, ", "))
-	for i, e := range f.Evidence {
-		label := ""
-		if i == 0 {
-			label = "rests on"
+	row("limited by", ionsInText(strings.Join(f.Limits, "; ")))
+	label := "rests on"
+	for _, e := range f.Evidence {
+		if e = withoutModel(e, model); e != "" {
+			row(label, e)
+			label = ""
 		}
-		row(label, e)
 	}
-	label := "way out"
+	label = "way out"
 	for _, r := range f.Remedies {
 		if r.Verified {
 			row(label, r.Text)
@@ -158,6 +167,20 @@ func (p *page) finding(f checks.Finding) {
 	}
 }
 
+// withoutModel leaves out the model, which stands under the line, and keeps what
+// is outside its range.
+func withoutModel(evidence, model string) string {
+	rest, ok := strings.CutPrefix(evidence, model)
+	if !ok || model == "" {
+		return evidence
+	}
+	rest = strings.TrimLeft(rest, "; ")
+	if reason, ok := strings.CutPrefix(rest, "outside it: "); ok {
+		return "outside the range of the model: " + reason
+	}
+	return rest
+}
+
 func amountText(f checks.Finding) string {
 	switch {
 	case math.IsNaN(f.AmountG) && math.IsNaN(f.AmountGPerL):
@@ -165,9 +188,9 @@ func amountText(f checks.Finding) string {
 	case math.IsNaN(f.AmountGPerL):
 		return massText(f.AmountG)
 	case math.IsNaN(f.AmountG):
-		return massText(f.AmountGPerL) + "/L"
+		return strengthText(f.AmountGPerL)
 	}
-	return massText(f.AmountG) + ", " + massText(f.AmountGPerL) + "/L"
+	return massText(f.AmountG) + ", " + strengthText(f.AmountGPerL)
 }
 
 func waiverText(w *recipe.Waiver) string {
@@ -230,7 +253,8 @@ func (p *page) verdictLine(v *verdict) {
 		if worst := v.worst(); worst > 0 {
 			verdict = p.ink(worst).Sprint(worst.String())
 		}
-		p.line("verdict  ", verdict, "  (", tallyText(v.findings), ")")
+		p.line(pad("verdict", marginWidth), verdict, ": ", tallyText(v.findings))
+		p.hang(0, "model", marginWidth, v.model, p.faint)
 	}
 }
 

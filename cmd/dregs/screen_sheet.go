@@ -171,17 +171,27 @@ func isWords(c column) bool {
 	return c.head == "step" || c.head == "solids" || strings.HasPrefix(c.head, "closest")
 }
 
-// outside tells where the activity model is used beyond its range, once a reason.
+// outside tells where the activity model is used beyond its range: the first
+// place with its reason, and how many more there are.
 func (p *page) outside(sys *equilibrium.System, steps []*trace.Step) {
-	seen := map[string]bool{}
+	first, more := "", 0
 	for _, s := range steps {
 		if s.After == nil || s.After.State.WaterKg <= 0 {
 			continue
 		}
-		if inside, reason := sys.ModelRange(s.After.State); !inside && !seen[reason] {
-			seen[reason] = true
-			p.hang(7, "", 0, fmt.Sprintf("beyond its range at line %d: %s", s.At.Line, reason), nil)
+		if inside, reason := sys.ModelRange(s.After.State); inside {
+			continue
+		} else if first == "" {
+			first = fmt.Sprintf("beyond its range at line %d: %s", s.At.Line, reason)
+		} else {
+			more++
 		}
+	}
+	if more > 0 {
+		first += fmt.Sprintf(" (and at %s)", counted(more, "further step"))
+	}
+	if first != "" {
+		p.hang(7, "", 0, first, nil)
 	}
 }
 

@@ -59,7 +59,21 @@ func stepText(s *recipe.Step) string {
 	for _, d := range s.Doses {
 		parts = append(parts, stepText(d))
 	}
+	if len(parts) > 1 && flowsOn(parts[1]) {
+		parts = append([]string{parts[0] + " " + parts[1]}, parts[2:]...)
+	}
 	return unitText(strings.Join(parts, ", "))
+}
+
+// flowsOn tells whether a part reads on from the step's word without a comma:
+// "heat to 40 °C", "hold for 30 min".
+func flowsOn(part string) bool {
+	first, _, _ := strings.Cut(part, " ")
+	switch first {
+	case "to", "for", "into", "all", "over":
+		return true
+	}
+	return false
 }
 
 // unitText writes units as on screens.
