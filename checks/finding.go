@@ -88,23 +88,3 @@ func (p *Pass) Report(s *trace.Step, f Finding) {
 	}
 	p.findings = append(p.findings, f)
 }
-
-// Thresholds are limits that a ruleset sets.
-type Thresholds struct {
-	HazeGPerL      float64 // solid below this is a note
-	ZoneSparing    float64 // saturation index below which a sparingly soluble solid may stay away for a while
-	ZoneSoluble    float64 // the same for a very soluble salt
-	FeedIndex      float64 // peak index on the mixing line worth telling
-	DissolveMargin float64 // fraction of its solubility that a charge should stay away from
-	AirGPerL       float64 // solid after meeting the air above which it is a caution
-	ImbalanceNote  float64 // of a water analysis
-	ImbalanceAlarm float64
-	GasLitres      float64 // gas given off worth telling
-	Levels         map[string]recipe.Level
-}
-
-// Standard are the limits of the standard ruleset.
-func Standard() *Thresholds {
-	return &Thresholds{HazeGPerL: 0.005, ZoneSparing: 0.3, ZoneSoluble: 0.03, FeedIndex: 0.5, DissolveMargin: 0.05, AirGPerL: 0.3,
-		ImbalanceNote: 0.05, ImbalanceAlarm: 0.10, GasLitres: 1}
-}

@@ -74,6 +74,11 @@ func readOptions() recipe.Options {
 
 func findingsOf(t *testing.T, name, text string) []Finding {
 	t.Helper()
+	return findingsUnder(t, name, text, nil)
+}
+
+func findingsUnder(t *testing.T, name, text string, limits *Thresholds) []Finding {
+	t.Helper()
 	r, problems := recipe.LoadBytes(filepath.Join("testdata", name), []byte(text), readOptions())
 	for _, p := range problems {
 		if p.Fatal {
@@ -84,7 +89,7 @@ func findingsOf(t *testing.T, name, text string) []Finding {
 	for _, p := range tr.Problems {
 		t.Fatalf("%s:%d: the walk: %s", name, p.At.Line, p.Message)
 	}
-	return Run(tr, problems, nil)
+	return Run(tr, problems, limits)
 }
 
 // Every rule has an archive with three recipes: one that trips it, one that nearly
