@@ -42,10 +42,9 @@ what is usual to buy, a formula the pure substance.`,
 
 // mix is what the beaker holds: a plan of one tank, and its walk.
 type mix struct {
-	trace  *trace.Trace
-	final  *trace.Step
-	air    string
-	faults []recipe.Problem
+	trace *trace.Trace
+	final *trace.Step
+	air   string // headspace, as given
 }
 
 func (c *call) beaker(amounts []string, at, headspace, as string) error {

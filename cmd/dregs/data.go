@@ -116,8 +116,8 @@ func (c *call) entries(word string) []entry {
 	}
 	ion := ""
 	for _, component := range database().Components {
-		if component.Name == word && word != "H2O" && word != "H^+" {
-			ion = word
+		if name := component.Name; bareIon(name) == bareIon(word) && name != "H2O" && name != "H^+" {
+			ion, word = name, name
 		}
 	}
 	for _, match := range []func(...string) bool{exact, holds} {
@@ -144,6 +144,9 @@ func (e *entry) holdsIon(ion string) bool {
 	}
 	return false
 }
+
+// bareIon makes the writings of an ion comparable: SO4^2-, SO42-, SO₄²⁻.
+func bareIon(name string) string { return strings.ReplaceAll(plainIon.Replace(name), "^", "") }
 
 // bareName is a name without charge and state: CO2 of CO2(aq).
 func bareName(name string) string {

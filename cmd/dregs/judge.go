@@ -1,9 +1,11 @@
 package main
 
 import (
+	"cmp"
 	"fmt"
 	"io"
 	"os"
+	"slices"
 	"strconv"
 	"strings"
 	"time"
@@ -74,6 +76,9 @@ func (c *call) load(path string, o recipe.Options) *verdict {
 			v.advice = append(v.advice, p)
 		}
 	}
+	slices.SortStableFunc(v.faults, func(a, b recipe.Problem) int {
+		return cmp.Or(cmp.Compare(a.At.File, b.At.File), cmp.Compare(a.At.Line, b.At.Line), cmp.Compare(a.At.Column, b.At.Column))
+	})
 	return v
 }
 

@@ -113,6 +113,9 @@ func flagFault(cmd *cobra.Command, err error) error {
 		var names []string
 		cmd.Flags().VisitAll(func(f *pflag.Flag) { names = append(names, f.Name) })
 		name := unknown.GetSpecifiedName()
+		if strings.Trim(name[:1], "0123456789.") == "" {
+			return badCallf("what begins with a hyphen is taken for an option; an amount is never negative")
+		}
 		if near := recipe.Nearest(name, names); near != "" {
 			return badCallf("%s has no option %q; the nearest is --%s", cmd.CommandPath(), name, near)
 		}

@@ -38,5 +38,4 @@ func (p *page) explain(e explained) {
 			p.line(row)
 		}
 	}
-	p.line()
 }
