@@ -94,6 +94,10 @@ func TestPairsBySubstance(t *testing.T) {
 		{"potassium permanganate", "glycerol", "fire"},
 		{"hydrogen peroxide 35 %", "ferrous sulfate", "oxygen"},
 		{"silver nitrate", "sodium azide", "explosive"},
+		{"sodium metabisulfite", "sodium cyanide", "hydrogen cyanide"},
+		{"sodium nitrate", "sulfuric acid", "nitric acid"},
+		{"salt", "sulfuric acid", "hydrogen chloride"},
+		{"citric acid", "nitric acid", "fire"},
 	} {
 		a, b := find(t, c.a), find(t, c.b)
 		gives := func(p Pair) bool { return strings.Contains(p.Gives, c.gives) }
@@ -102,7 +106,10 @@ func TestPairsBySubstance(t *testing.T) {
 		}
 	}
 	// And harmless company stays silent.
-	for _, c := range [][2]string{{"sodium chloride", "water"}, {"Epsom salt", "gypsum"}, {"sodium sulfate", "sulfuric acid 10 %"}, {"sodium acetate", "acetic acid"}, {"KH2PO4", "Na2HPO4"}, {"boric acid", "nickel sulfate hexahydrate"}, {"calcium nitrate tetrahydrate", "magnesium sulfate heptahydrate"}, {"ammonium sulfate", "sulfuric acid"}, {"citric acid", "trisodium citrate dihydrate"}, {"water", "hydrochloric acid"}} {
+	for _, c := range [][2]string{{"sodium chloride", "water"}, {"Epsom salt", "gypsum"}, {"sodium sulfate", "sulfuric acid 10 %"}, {"sodium acetate", "acetic acid"}, {"KH2PO4", "Na2HPO4"}, {"boric acid", "nickel sulfate hexahydrate"}, {"calcium nitrate tetrahydrate", "magnesium sulfate heptahydrate"}, {"ammonium sulfate", "sulfuric acid"}, {"citric acid", "trisodium citrate dihydrate"}, {"water", "hydrochloric acid"},
+		// Routine: neutralising, pH by acid in baths and nutrient liquors, bisulfite beside sulfite.
+		{"sulfuric acid", "caustic soda 50 %"}, {"sulfuric acid", "hydrated lime"}, {"nitric acid", "calcium nitrate tetrahydrate"},
+		{"potassium nitrate", "ferric sodium EDTA"}, {"sodium bisulfite", "sodium sulfite"}, {"sodium nitrite", "borax"}} {
 		a, b := find(t, c[0]), find(t, c[1])
 		for _, p := range append(Clashes(a.Hazards, b.Hazards, 20), Clashes(b.Hazards, a.Hazards, 20)...) {
 			t.Errorf("%s with %s: %s", c[0], c[1], p.Gives)
@@ -124,6 +131,8 @@ func TestClashesOrder(t *testing.T) {
 		{"caustic flakes into cold water", caustic, water, 15, 0},
 		{"caustic flakes into hot water", caustic, water, 60, 1},
 		{"water onto caustic flakes", water, caustic, 15, 1},
+		{"sulfuric acid into a nickel chloride bath", acid, find(t, "nickel chloride hexahydrate").Hazards, 50, 0},
+		{"nitric acid into a citrate liquor", find(t, "nitric acid").Hazards, find(t, "trisodium citrate dihydrate").Hazards, 25, 0},
 	} {
 		if got := Clashes(c.in, c.into, c.tempC); len(got) != c.want {
 			t.Errorf("%s: %d pairs %v, want %d", c.what, len(got), got, c.want)

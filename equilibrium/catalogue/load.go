@@ -78,6 +78,9 @@ func readSubstance(cell func(string) string) (*Substance, error) {
 		Source: cell("source"), Note: cell("note"), MolarMass: math.NaN(),
 		FromMemory: strings.Contains(strings.ToLower(basis), "memory"),
 	}
+	if s.Name == "" {
+		return nil, fmt.Errorf("no name")
+	}
 	var err error
 	if s.Formula != "" {
 		f, err := equilibrium.ParseFormula(s.Formula)
@@ -105,7 +108,13 @@ func readSubstance(cell func(string) string) (*Substance, error) {
 			return nil, fmt.Errorf("%q is not a hazard class", h)
 		}
 	}
-	if ways := s.Inert; ways == s.Computed() && (ways || s.NoData == "") || s.NoData != "" && (s.Inert || s.Computed()) {
+	ways := 0
+	for _, given := range []bool{s.Computed(), s.NoData != "", s.Inert} {
+		if given {
+			ways++
+		}
+	}
+	if ways != 1 {
 		return nil, fmt.Errorf("must have exactly one of brings, no_data, inert")
 	}
 	return s, nil

@@ -120,15 +120,16 @@ func TestLoadRefuses(t *testing.T) {
 	const head = "name,formula,synonyms,form,strength_wt,density_kg_l,brings,heat_kj_mol,hazards,no_data,inert,source,basis,note\n"
 	for row, want := range map[string]string{
 		"a,NaCl,,powder,1,,Na^+ + Cl^-,,,,,s,,\nA,KCl,,powder,1,,K^+ + Cl^-,,,,,s,,": "taken",
-		"a,Xx,,powder,1,,Na^+,,,,,s,,":                  "not an element",
-		"a,NaCl,,powder,2,,Na^+ + Cl^-,,,,,s,,":         "strength",
-		"a,NaCl,,powder,1,heavy,Na^+ + Cl^-,,,,,s,,":    "density",
-		"a,NaCl,,powder,1,,Na^+ + Cl^-,,smelly,,,s,,":   "hazard class",
-		"a,NaCl,,powder,1,,,,,,,s,,":                    "exactly one",
-		"a,NaCl,,powder,1,,Na^+ + Cl^-,,,oxidiser,,s,,": "exactly one",
-		"a,NaCl,,powder,1,,Na^+ + Cl^-,,,,yes,s,,":      "exactly one",
-		"a,NaCl,,powder,1,,,,,because,yes,s,,":          "exactly one",
-		"a,NaCl,,powder,1,,Na^+ Cl^-,,,,,s,,":           "no sign",
+		",NaCl,,powder,1,,Na^+ + Cl^-,,,,,s,,":                                       "no name",
+		"a,Xx,,powder,1,,Na^+,,,,,s,,":                                               "not an element",
+		"a,NaCl,,powder,2,,Na^+ + Cl^-,,,,,s,,":                                      "strength",
+		"a,NaCl,,powder,1,heavy,Na^+ + Cl^-,,,,,s,,":                                 "density",
+		"a,NaCl,,powder,1,,Na^+ + Cl^-,,smelly,,,s,,":                                "hazard class",
+		"a,NaCl,,powder,1,,,,,,,s,,":                                                 "exactly one",
+		"a,NaCl,,powder,1,,Na^+ + Cl^-,,,oxidiser,,s,,":                              "exactly one",
+		"a,NaCl,,powder,1,,Na^+ + Cl^-,,,,yes,s,,":                                   "exactly one",
+		"a,NaCl,,powder,1,,,,,because,yes,s,,":                                       "exactly one",
+		"a,NaCl,,powder,1,,Na^+ Cl^-,,,,,s,,":                                        "no sign",
 	} {
 		if _, err := load(head + row); err == nil || !strings.Contains(err.Error(), want) {
 			t.Errorf("%s: %v, want %q", row, err, want)

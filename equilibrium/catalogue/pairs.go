@@ -41,8 +41,6 @@ var pairs = []Pair{
 	{"strong acid", "thiocyanate", false, anyC, "toxic gases (carbonyl sulfide, hydrogen cyanide)", "Keep thiocyanate away from strong acid.", reactive},
 	{"strong acid", "reactive metal", false, anyC, "hydrogen", "No sparks, open vent, slow addition.", prudent},
 	{"acid", "reactive metal", false, anyC, "hydrogen", "No sparks, open vent.", practice},
-	{"strong acid", "strong base", false, anyC, "much heat, spattering", "Dilute one of the two first; dose the stronger one under cooling.", practice},
-	{"strong acid", "ammonia", false, anyC, "heat and fumes of ammonium salt", "Dilute first; exhaust the vessel.", practice},
 	{"strong acid", "caustic solid", false, anyC, "violent heat, spattering", "Dissolve the alkali first.", practice},
 
 	{"water", "concentrated sulfuric acid", true, anyC, "boiling and spattering of acid", "Always the acid into the water, slowly, stirred and cooled; never water into the acid.", prudent},
@@ -79,18 +77,21 @@ var pairs = []Pair{
 	{"lead", "azide", false, anyC, "explosive lead azide", "Never combine; mind lead and copper pipes.", reactive},
 	{"copper", "azide", false, anyC, "explosive copper azide", "Never combine; mind copper pipes.", reactive},
 
-	{"nitric acid", "organic", false, anyC, "fire or explosion, nitrogen oxides, at times after a delay", "Keep organics out of nitric acid; never close the vessel.", prudent},
+	{"organic", "nitric acid", true, anyC, "fire or explosion with the strong acid, nitrogen oxides, at times after a delay", "Keep organics out of strong nitric acid; never close the vessel.", prudent},
+	{"nitric acid", "solvent", false, anyC, "fire or explosion, nitrogen oxides, at times after a delay", "Keep solvents out of nitric acid; never close the vessel.", prudent},
 	{"nitric acid", "flammable", false, anyC, "fire or explosion, at times after a delay", "Never combine.", prudent},
 	{"nitric acid", "reactive metal", false, anyC, "nitrogen oxides, hydrogen", "Exhaust the vessel.", prudent},
 	{"nitric acid", "copper", false, anyC, "with the metal nitrogen oxides", "Exhaust the vessel when metal is there.", practice},
 	{"nitric acid", "reducer", false, anyC, "fire, nitrogen oxides", "Never combine concentrates.", prudent},
 	{"nitric acid", "sulfite", false, anyC, "nitrogen oxides and sulfur dioxide", "Exhaust the vessel.", practice},
 	{"nitric acid", "ammonium salt", false, anyC, "ammonium nitrate: explosive when dried out or contaminated", "Never let such liquor evaporate to dryness.", practice},
-	{"concentrated sulfuric acid", "organic", false, anyC, "charring, heat, gas", "Dilute the acid first.", prudent},
+	{"organic", "concentrated sulfuric acid", true, anyC, "charring, heat, gas", "Dilute the acid first.", prudent},
+	{"concentrated sulfuric acid", "solvent", false, anyC, "charring, heat, gas", "Dilute the acid first.", prudent},
 	{"concentrated sulfuric acid", "flammable", false, anyC, "heat, ignition", "Never combine.", prudent},
-	{"concentrated sulfuric acid", "chloride", false, anyC, "hydrogen chloride", "Dilute the acid first; exhaust the vessel.", practice},
-	{"concentrated sulfuric acid", "bromide", false, anyC, "hydrogen bromide, bromine", "Dilute the acid first.", practice},
-	{"concentrated sulfuric acid", "iodide", false, anyC, "iodine, hydrogen sulfide", "Dilute the acid first.", practice},
+	{"chloride", "concentrated sulfuric acid", true, anyC, "hydrogen chloride", "Dilute the acid first; exhaust the vessel.", practice},
+	{"bromide", "concentrated sulfuric acid", true, anyC, "hydrogen bromide, bromine", "Dilute the acid first.", practice},
+	{"iodide", "concentrated sulfuric acid", true, anyC, "iodine, hydrogen sulfide", "Dilute the acid first.", practice},
+	{"nitrate", "concentrated sulfuric acid", true, anyC, "nitric acid and its vapours", "Dilute the acid first; exhaust the vessel.", practice},
 	{"concentrated sulfuric acid", "peroxide", false, anyC, "peroxomonosulfuric acid, explosive with organics", "Never above the strength that the site has approved.", reactive},
 	{"concentrated sulfuric acid", "perchlorate", false, anyC, "anhydrous perchloric acid, explosive", "Never combine.", prudent},
 
@@ -115,6 +116,7 @@ var pairs = []Pair{
 	{"chlorate", "organic", false, anyC, "fire or explosion when dry", "Never let residues dry on clothes, wood or paper.", prudent},
 	{"chlorate", "ammonium salt", false, anyC, "ammonium chlorate, explosive", "Never combine.", prudent},
 	{"chlorate", "sulfite", false, anyC, "heat, chlorine dioxide in acid", "Keep apart.", practice},
+	{"permanganate", "solvent", false, anyC, "fire", "Never combine the solid with solvents.", prudent},
 	{"permanganate", "organic", false, anyC, "fire with glycerol and glycols", "Never combine the solid with organics.", prudent},
 	{"permanganate", "ammonium salt", false, anyC, "ammonium permanganate, explosive when dry", "Never let it dry.", reactive},
 	{"permanganate", "chloride", false, anyC, "chlorine, in acid", "Exhaust the vessel when acid is there.", practice},
@@ -129,14 +131,23 @@ var pairs = []Pair{
 func Pairs() []Pair { return slices.Clone(pairs) }
 
 // Clashes returns the pairs of a substance that goes into another, by their
-// classes, at a temperature of the mix. Waters and plain liquors are of the class
-// "water". Of pairs that give the same only the first is returned.
+// classes, at a temperature of the mix, °C. Of pairs that give the same only the
+// first is returned, and salts of one acid are no pair with it (bisulfite with
+// sulfite).
+//
+// The classes of what is in a tank are for the caller to tell, by its state: a
+// water or dilute liquor is of the class "water", and one to which strong acid was
+// added is no "concentrated sulfuric acid" or "nitric acid" any more, but still an
+// "acid". Heat of neutralisation is no pair: it is computed.
 func Clashes(goesIn, into []string, tempC float64) []Pair {
 	var out []Pair
 	for _, p := range pairs {
 		there := slices.Contains(goesIn, p.A) && slices.Contains(into, p.B)
 		back := !p.Ordered && slices.Contains(goesIn, p.B) && slices.Contains(into, p.A)
 		if !there && !back || tempC < p.AboveC {
+			continue
+		}
+		if p.A == "acid" && slices.Contains(goesIn, p.B) && slices.Contains(into, p.B) {
 			continue
 		}
 		if !slices.ContainsFunc(out, func(o Pair) bool { return o.Gives == p.Gives }) {
