@@ -49,7 +49,6 @@ type Solver struct {
 	cons      []constraint
 	rows      []float64 // constraint rows, dense over local components
 	rhs       []float64
-	wasSolid  []bool
 
 	lambda, trial []float64 // local
 	n             []float64 // by active species

@@ -89,7 +89,8 @@ func (w *walker) leastWater(l *Liquor, phase int, kept float64) float64 {
 // leastTemp climbs in steps of 5 K to 100 °C and halves the last one.
 func (w *walker) leastTemp(l *Liquor, phase int, kept float64) float64 {
 	t := w.trialOf(l)
-	low, high := l.TempK, l.TempK
+	var low float64
+	high := l.TempK
 	for {
 		if high >= boilingK {
 			return math.NaN()
