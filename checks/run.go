@@ -25,11 +25,9 @@ func Run(tr *trace.Trace, problems []recipe.Problem, t *Thresholds) []Finding {
 		}
 	}
 	for i := range out {
-		if level, ok := t.Levels[out[i].Code]; ok {
-			out[i].Level = level
-		}
+		out[i].Level = t.level(&out[i])
 	}
-	waive(tr.Recipe, out)
+	waive(tr, out)
 	out = append(out, unusedWaivers(tr)...)
 	sort.SliceStable(out, func(i, j int) bool {
 		a, b := &out[i], &out[j]
@@ -58,10 +56,10 @@ func ofProblem(tr *trace.Trace, problem recipe.Problem) Finding {
 }
 
 // waive marks findings that a waiver of their step, stage or recipe accepts.
-func waive(r *recipe.Recipe, findings []Finding) {
+func waive(tr *trace.Trace, findings []Finding) {
 	for i := range findings {
 		f := &findings[i]
-		lists := [][]*recipe.Waiver{r.Waivers}
+		lists := [][]*recipe.Waiver{tr.Recipe.Waivers}
 		if f.step != nil {
 			if f.step.Stage != nil {
 				lists = append(lists, f.step.Stage.Waivers)
@@ -72,13 +70,23 @@ func waive(r *recipe.Recipe, findings []Finding) {
 		}
 		for _, list := range lists {
 			for _, w := range list {
-				if w.Code == f.Code && (w.Phase == "" || w.Phase == f.Phase || w.Phase == f.Formula) && !w.Expired {
+				if w.Code == f.Code && covers(tr, w, f) && !w.Expired {
 					w.Used = true
 					f.Waived = w
 				}
 			}
 		}
 	}
+}
+
+// covers tells whether a waiver is of the solid of a finding, whichever of its
+// names it uses.
+func covers(tr *trace.Trace, w *recipe.Waiver, f *Finding) bool {
+	if w.Phase == "" || w.Phase == f.Phase || w.Phase == f.Formula {
+		return true
+	}
+	ph, ok := tr.System.Database.LookupPhase(w.Phase)
+	return ok && ph.Name == f.Phase
 }
 
 func unusedWaivers(tr *trace.Trace) []Finding {

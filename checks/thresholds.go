@@ -78,3 +78,16 @@ func ReadThresholds(paths ...string) (*Thresholds, []recipe.Problem) {
 	}
 	return thresholds(set), nil
 }
+
+// level is that of a finding under the ruleset. What a rule made less of than its
+// usual level, such as a trace of solid, is not raised again.
+func (t *Thresholds) level(f *Finding) recipe.Level {
+	level, ok := t.Levels[f.Code]
+	if !ok {
+		return f.Level
+	}
+	if rule, ok := Lookup(f.Code); ok && f.Level < rule.Level {
+		return min(f.Level, level)
+	}
+	return level
+}

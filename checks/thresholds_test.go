@@ -52,10 +52,11 @@ stage "make" {
 		return 0
 	}
 	for rules, want := range map[string]recipe.Level{
-		"":                                   recipe.Stop,
-		"levels { SOL-01 = \"caution\" }\n":  recipe.Caution,
-		"limits { haze = \"100 g/L\" }\n":    recipe.Note,
-		"limits { zone_sparing = \"10\" }\n": 0, // then it is SAT-02
+		"":                                  recipe.Stop,
+		"levels { SOL-01 = \"caution\" }\n": recipe.Caution,
+		"limits { haze = \"100 g/L\" }\n":   recipe.Note,
+		"limits { haze = \"100 g/L\" }\nlevels { SOL-01 = \"caution\" }\n": recipe.Note,
+		"limits { zone_sparing = \"10\" }\n":                               0, // then it is SAT-02
 	} {
 		if got := level(rules); got != want {
 			t.Errorf("%q: gypsum is a %v, want %v", rules, got, want)
