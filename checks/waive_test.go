@@ -2,7 +2,11 @@ package checks
 
 import (
 	"fmt"
+	"path/filepath"
+	"reflect"
 	"testing"
+
+	"github.com/rogpeppe/go-internal/txtar"
 
 	"dregs/recipe"
 )
@@ -64,5 +68,26 @@ stage "make" {
 				t.Error("a waived finding counts")
 			}
 		})
+	}
+}
+
+// Same input, same findings: in order, word for word.
+func TestFindingsAreTheSameEachTime(t *testing.T) {
+	archive, err := txtar.ParseFile(filepath.Join("testdata", "SOL-06.txtar"))
+	if err != nil {
+		t.Fatal(err)
+	}
+	text := string(archive.Files[0].Data)
+	list := func() (out []string) {
+		for _, f := range findingsOf(t, "again", text) {
+			out = append(out, fmt.Sprint(f.At.Line, f.Code, f.Level, f.Phase, f.Message, f.Limits, f.Evidence, f.Remedies))
+		}
+		return out
+	}
+	first := list()
+	for range 10 {
+		if again := list(); !reflect.DeepEqual(first, again) {
+			t.Fatalf("%q\nthen %q", first, again)
+		}
 	}
 }
