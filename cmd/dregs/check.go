@@ -39,7 +39,7 @@ A waived finding is shown and does not count.`,
 	f := verb.Flags()
 	f.StringVar(&o.as, "as", "text", "text, lines or json")
 	f.StringVar(&o.failOn, "fail-on", "stop", "least level that gives exit code 1: stop, caution, note or never")
-	f.StringVar(&o.rules, "rules", "", "`FILE` with thresholds and levels of the site")
+	f.StringVar(&o.rules, "rules", "", "`FILE` with limits and levels, after those that the recipe names")
 	f.StringArrayVar(&o.set, "set", nil, "give a parameter, or batch, another value: `NAME=VALUE`; may be repeated")
 	f.IntVar(&o.jobs, "jobs", runtime.GOMAXPROCS(0), "recipes checked at a time")
 	return verb
@@ -64,8 +64,13 @@ func (c *call) check(paths []string, o checkOptions) error {
 	if len(paths) == 0 {
 		paths = []string{"."}
 	}
+	limits := &rulebook{site: o.rules}
+	if _, problems := limits.forRecipe(nil); len(problems) > 0 {
+		c.tellFaults(&verdict{file: o.rules, faults: problems}, o.as == "lines")
+		return nil
+	}
 	files := c.findRecipes(paths)
-	verdicts := c.judgeAll(files, read, o)
+	verdicts := c.judgeAll(files, read, limits, o.jobs)
 	failLevel := failLevels[o.failOn]
 	for _, v := range verdicts {
 		if v.worst() >= failLevel && c.code == exitClear {
@@ -84,21 +89,31 @@ func (c *call) check(paths []string, o checkOptions) error {
 	return nil
 }
 
+// judge applies the rules under the limits that the recipe and the call name.
+func (v *verdict) judge(limits *rulebook) {
+	thresholds, problems := limits.forRecipe(v.recipe)
+	if len(problems) > 0 {
+		v.faults = problems
+		return
+	}
+	v.findings = checks.Run(v.trace, v.advice, thresholds)
+	v.note()
+}
+
 // judgeAll checks the recipes with several workers; the order of the verdicts is
 // that of the files.
-func (c *call) judgeAll(files []string, read recipe.Options, o checkOptions) []*verdict {
+func (c *call) judgeAll(files []string, read recipe.Options, limits *rulebook, jobs int) []*verdict {
 	verdicts := make([]*verdict, len(files))
 	next := make(chan int)
 	var workers sync.WaitGroup
-	for range min(o.jobs, len(files)) {
+	for range min(jobs, len(files)) {
 		workers.Add(1)
 		go func() {
 			defer workers.Done()
 			for i := range next {
 				v := c.load(files[i], read)
 				if v.usable() {
-					v.findings = checks.Run(v.trace, v.advice, nil)
-					v.note()
+					v.judge(limits)
 				}
 				v.trace = nil
 				verdicts[i] = v

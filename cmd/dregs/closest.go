@@ -58,7 +58,7 @@ func nearText(list []near) string {
 		if n.slow {
 			text += " (slow)"
 		}
-		parts = append(parts, text)
+		parts = append(parts, strings.ReplaceAll(text, " ", glue))
 	}
 	return strings.Join(parts, ", ")
 }

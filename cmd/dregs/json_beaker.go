@@ -17,6 +17,7 @@ type dissolvedJSON struct {
 	DissolvedG *float64 `json:"dissolved_g"`
 	PerL       *float64 `json:"dissolved_g_per_l"`
 	StaysG     *float64 `json:"stays_g"`
+	Elsewhere  []string `json:"partly_in"` // other solids that hold part of what dissolved
 }
 
 // beakerJSON prints the mix as one step, with what became of the solids.
@@ -24,7 +25,7 @@ func (c *call) beakerJSON(m *mix) error {
 	report := beakerReport{Schema: schema, Version: version, stepJSON: stepOfJSON(m.trace.System, m.final), Headspace: m.air, Dissolved: []dissolvedJSON{}, Missing: missingOf(m.trace), Caution: caution}
 	report.Step, report.What = "mix", "mix"
 	for _, d := range m.becameOf() {
-		report.Dissolved = append(report.Dissolved, dissolvedJSON{d.name, d.formula, number(d.chargedG), number(d.goneG()), number(d.goneG() / d.litres), number(d.leftG)})
+		report.Dissolved = append(report.Dissolved, dissolvedJSON{d.name, d.formula, number(d.chargedG), number(d.goneG()), number(d.goneG() / d.litres), number(d.leftG), append([]string{}, d.elsewhere...)})
 	}
 	return writeJSON(c.out, report)
 }

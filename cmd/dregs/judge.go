@@ -134,14 +134,14 @@ func today() time.Time {
 func (c *call) tellFaults(v *verdict, asLines bool) {
 	for _, p := range v.faults {
 		c.code = exitUnusable
+		text := fmt.Sprintf("dregs: %s, line %d, column %d: %s (%s)", p.At.File, p.At.Line, p.At.Column, problemText(p), p.Code)
 		switch {
 		case p.At.Line == 0:
-			fmt.Fprintf(c.fault, "dregs: %s: %s [%s]\n", v.file, problemText(p), p.Code)
+			text = fmt.Sprintf("dregs: %s: %s (%s)", v.file, problemText(p), p.Code)
 		case asLines:
-			fmt.Fprintf(c.fault, "%s: fault: %s [%s]\n", location(p.At), problemText(p), p.Code)
-		default:
-			fmt.Fprintf(c.fault, "dregs: %s, line %d, column %d: %s (%s)\n", p.At.File, p.At.Line, p.At.Column, problemText(p), p.Code)
+			text = fmt.Sprintf("%s: fault: %s [%s]", location(p.At), problemText(p), p.Code)
 		}
+		fmt.Fprintln(c.fault, printable(text))
 	}
 }
 

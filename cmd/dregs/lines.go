@@ -24,7 +24,7 @@ func (c *call) checkLines(verdicts []*verdict) {
 			if f.Waived != nil {
 				level = "waived " + level
 			}
-			fmt.Fprintf(c.out, "%s: %s: %s [%s]\n", at, level, text, f.Code)
+			fmt.Fprintf(c.out, "%s: %s: %s [%s]\n", printable(at), level, printable(text), f.Code)
 		}
 	}
 	fmt.Fprintf(c.out, "dregs: %s\n", caution)

@@ -59,7 +59,7 @@ type call struct {
 
 // faultf tells something wrong with the call and remembers it.
 func (c *call) faultf(format string, args ...any) {
-	fmt.Fprintf(c.fault, "dregs: "+format+"\n", args...)
+	fmt.Fprintln(c.fault, printable(fmt.Sprintf("dregs: "+format, args...)))
 	c.code = exitUnusable
 }
 

@@ -102,7 +102,7 @@ func stateText(l *trace.Liquor) string {
 	if l.State.WaterKg <= 0 {
 		return fmt.Sprintf("%s kg, no liquid", figures(l.MassKg, 4))
 	}
-	text := fmt.Sprintf("%s, %s °C, pH %s, ionic strength %s mol/kg", volumeText(l.VolumeL), fixed(l.TempK-equilibrium.ZeroCelsius, 1), fixed(l.State.PH, 2), figures(l.State.IonicStrength, 2))
+	text := fmt.Sprintf("%s, %s °C, pH %s, ionic strength %s mol/kg", volumeText(l.VolumeL), fixed(l.TempK-equilibrium.ZeroCelsius, 1), fixed(l.State.PH, 2), ionicText(l.State.IonicStrength))
 	if kg := solidsKg(l); kg > 0 {
 		text += ", solids " + massText(1000*kg)
 	}

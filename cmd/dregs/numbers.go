@@ -91,6 +91,14 @@ func indexText(index, uncertainty float64) string {
 	return text
 }
 
+// ionicText writes an ionic strength; that of pure water is none.
+func ionicText(ionicStrength float64) string {
+	if ionicStrength < 1e-6 {
+		return "0"
+	}
+	return figures(ionicStrength, 3)
+}
+
 // percentText writes a probability or share; certainty is never claimed.
 func percentText(share float64) string {
 	switch {

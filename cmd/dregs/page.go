@@ -2,6 +2,7 @@ package main
 
 import (
 	"strings"
+	"unicode"
 	"unicode/utf8"
 
 	"github.com/fatih/color"
@@ -43,8 +44,11 @@ func (p *page) ink(level recipe.Level) *color.Color {
 	return p.remark
 }
 
+// glue stands for a space at which no line breaks.
+const glue = "\x00"
+
 func (p *page) line(parts ...string) {
-	p.WriteString(strings.TrimRight(strings.Join(parts, ""), " "))
+	p.WriteString(strings.TrimRight(strings.ReplaceAll(strings.Join(parts, ""), glue, " "), " "))
 	p.WriteByte('\n')
 }
 
@@ -52,6 +56,7 @@ func (p *page) rule(stroke string) { p.line(p.faint.Sprint(strings.Repeat(stroke
 
 // ends puts left and right on one line, or on two when they do not fit.
 func (p *page) ends(left, right string, ink *color.Color) {
+	left, right = printable(left), printable(right)
 	gap := p.width - length(left) - length(right)
 	if right == "" || gap < 2 {
 		p.line(ink.Sprint(left))
@@ -66,6 +71,7 @@ func (p *page) ends(left, right string, ink *color.Color) {
 // hang writes text behind a label, its further lines under the first.
 func (p *page) hang(indent int, label string, labelWidth int, text string, ink *color.Color) {
 	lead := strings.Repeat(" ", indent)
+	label = printable(label)
 	shown := pad(label, labelWidth)
 	if label != "" && ink != nil {
 		shown = ink.Sprint(label) + shown[len(label):]
@@ -86,6 +92,16 @@ func (p *page) caution() {
 	}
 }
 
+// printable keeps a name in a file from steering the terminal.
+func printable(s string) string {
+	return strings.Map(func(r rune) rune {
+		if unicode.IsControl(r) && r != '\x00' { // glue
+			return '?'
+		}
+		return r
+	}, s)
+}
+
 func length(s string) int { return utf8.RuneCountInString(s) }
 
 // pad fills up to a width, on the left when it is negative.
@@ -102,6 +118,7 @@ func wrap(text string, width int) []string {
 	var rows []string
 	row := ""
 	for _, word := range joined(strings.Fields(text)) {
+		word = printable(word)
 		switch {
 		case row == "":
 			row = word

@@ -1,6 +1,9 @@
 package main
 
 import (
+	"strings"
+	"sync"
+
 	"dregs/checks"
 	"dregs/recipe"
 )
@@ -30,4 +33,41 @@ func knownCode(code string) bool {
 		}
 	}
 	return false
+}
+
+// rulebook reads the rulesets that recipes name, each set of files once. It may
+// be used by several workers.
+type rulebook struct {
+	site string // file of the call, "" for none
+	lock sync.Mutex
+	read map[string]reading
+}
+
+type reading struct {
+	thresholds *checks.Thresholds
+	problems   []recipe.Problem
+}
+
+// forRecipe gives the limits for a recipe: the standard ones, changed by the files
+// it names and then by that of the call. A nil recipe names none.
+func (b *rulebook) forRecipe(r *recipe.Recipe) (*checks.Thresholds, []recipe.Problem) {
+	var paths []string
+	if r != nil {
+		paths = append(paths, r.Rules...)
+	}
+	if b.site != "" {
+		paths = append(paths, b.site)
+	}
+	key := strings.Join(paths, "\x00")
+	b.lock.Lock()
+	defer b.lock.Unlock()
+	got, ok := b.read[key]
+	if !ok {
+		got.thresholds, got.problems = checks.ReadThresholds(paths...)
+		if b.read == nil {
+			b.read = map[string]reading{}
+		}
+		b.read[key] = got
+	}
+	return got.thresholds, got.problems
 }

@@ -4,15 +4,18 @@ import (
 	"fmt"
 	"io"
 	"math"
+	"slices"
 	"strings"
 
 	"dregs/equilibrium"
+	"dregs/recipe/trace"
 )
 
 // dissolving is a charged solid and what became of it.
 type dissolving struct {
 	name, formula           string
 	chargedG, leftG, litres float64
+	elsewhere               []string // solids that hold part of what dissolved
 }
 
 func (d dissolving) goneG() float64 { return math.Max(0, d.chargedG-d.leftG) }
@@ -41,7 +44,30 @@ func (m *mix) becameOf() []dissolving {
 				}
 			}
 		}
+		d.elsewhere = m.elsewhere(s.Charged)
 		out = append(out, d)
+	}
+	return out
+}
+
+// elsewhere names the solids, other than the charge itself, that hold something
+// the charge has brought.
+func (m *mix) elsewhere(c *trace.Charged) []string {
+	brought := map[string]bool{}
+	for _, part := range c.Parts {
+		if part.Component != "H2O" && part.Component != "H^+" {
+			brought[part.Component] = true
+		}
+	}
+	var out []string
+	for _, solid := range m.final.After.Solids {
+		if slices.Contains(c.SolidPhases, solid.Phase) {
+			continue
+		}
+		phase := m.trace.System.Phases[solid.Phase]
+		if slices.ContainsFunc(phase.Parts, func(p equilibrium.Part) bool { return brought[p.Component] }) {
+			out = append(out, phase.Name)
+		}
 	}
 	return out
 }
@@ -65,7 +91,7 @@ func (c *call) beakerScreen(m *mix) {
 	row := func(label, text string) { p.hang(0, label, 18, text, p.faint) }
 	if st.WaterKg > 0 {
 		row("pH", fixed(st.PH, 2))
-		row("ionic strength", figures(st.IonicStrength, 3)+" mol/kg")
+		row("ionic strength", ionicText(st.IonicStrength)+" mol/kg")
 		row("water activity", fixed(st.WaterActivity, 4))
 		row("density", fixed(sys.SolutionMassKg(st)/l.SolutionL, 4)+" kg/L without solids")
 	}
@@ -107,6 +133,11 @@ func (p *page) dissolved(m *mix) {
 		rows = append(rows, []string{d.name, ionText(d.formula), massText(d.chargedG), massText(d.goneG()), strengthText(d.goneG() / d.litres), orWord(d.leftG, "nothing")})
 	}
 	p.table(0, []column{{head: "charged solid"}, {head: "as", drop: 1}, {head: "charged", right: true}, {head: "dissolved", right: true}, {head: "per L of solution", right: true}, {head: "stays", right: true}}, rows)
+	for _, d := range list {
+		if len(d.elsewhere) > 0 {
+			p.hang(0, "", 0, "of "+d.name+", what dissolved stands partly in "+strings.Join(d.elsewhere, ", "), nil)
+		}
+	}
 	p.line()
 }
 

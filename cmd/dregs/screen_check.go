@@ -30,14 +30,14 @@ func (p *page) recipe(v *verdict) {
 	p.rule("═")
 	p.ends(v.name(), headText(v), p.strong)
 	if v.name() != v.file {
-		p.line(p.faint.Sprint(v.file))
+		p.line(p.faint.Sprint(printable(v.file)))
 	}
 	stage, at, open := "", recipe.Range{}, false
 	for i, f := range inReadingOrder(v) {
 		if i == 0 || f.Stage != stage {
 			stage, open = f.Stage, false
 			p.rule("─")
-			p.line(stageText(f))
+			p.line(printable(stageText(f)))
 		}
 		if !open || f.At != at {
 			at, open = f.At, true

@@ -19,7 +19,7 @@ func (c *call) sheetScreen(v *verdict) {
 	sys := v.trace.System
 	p.rule("═")
 	p.ends(v.name(), headText(v), p.strong)
-	p.line(p.faint.Sprint(v.file))
+	p.line(p.faint.Sprint(printable(v.file)))
 	rows, stages, near := sheetRows(sys, v.trace.Steps)
 	columns := []column{{head: "line", right: true}, {head: "step"}, {head: "tank"}, {head: "min", right: true}, {head: "°C", right: true},
 		{head: "L", right: true}, {head: "kg", right: true, drop: 2}, {head: "pH", right: true}, {head: "I mol/kg", right: true}, {head: "solids"}}
@@ -56,7 +56,7 @@ func sheetRows(sys *equilibrium.System, steps []*trace.Step) (rows [][]string, s
 		}
 		row := []string{fmt.Sprint(s.At.Line), what, s.Tank.Name, fixed(s.End, 0), fixed(l.TempK-equilibrium.ZeroCelsius, 1), figures(l.VolumeL, 4), figures(l.MassKg, 4), "-", "-", solidsText(sys, l)}
 		if l.State.WaterKg > 0 {
-			row[7], row[8] = fixed(l.State.PH, 2), figures(l.State.IonicStrength, 3)
+			row[7], row[8] = fixed(l.State.PH, 2), ionicText(l.State.IonicStrength)
 		}
 		rows, stages = append(rows, row), append(stages, stage)
 		near = append(near, nearText(closestOf(sys, s)))
@@ -117,7 +117,7 @@ func (p *page) batchTable(columns []column, rows [][]string, stages, near []stri
 		if stages[i] != stage {
 			stage = stages[i]
 			p.rule("─")
-			p.line(p.strong.Sprint(stage))
+			p.line(p.strong.Sprint(printable(stage)))
 		}
 		var cells [][]string
 		for k, text := range row {

@@ -61,6 +61,6 @@ func (p *page) table(indent int, columns []column, rows [][]string) {
 	}
 	p.line(p.faint.Sprint(write(func(i int) string { return columns[i].head })))
 	for _, row := range rows {
-		p.line(write(func(i int) string { return row[i] }))
+		p.line(printable(write(func(i int) string { return row[i] })))
 	}
 }
