@@ -12,6 +12,6 @@ var Codes = []CodeText{
 	{"RCP-05", "the steps do not fit together", "A step without a tank, a transfer into the tank it comes from, a name defined twice. The walk could not be done as written."},
 	{"RCP-06", "defined and not used", "A parameter, material, water or tank of the recipe that no step uses. Often a misspelt name elsewhere. Things in stock files may stay unused."},
 	{"RCP-07", "a waiver that does not hold", "A waiver without a reason, one whose date has passed, or one that waived nothing. Waivers are renewed or removed; they are no settings."},
-	{"RCP-08", "too large or too deep", "Files are limited to 1 MiB, brackets to 64 deep and numbers to 40 characters: no recipe needs more, and a hostile file could stop the machine."},
+	{"RCP-08", "too large or too deep", "Files are limited to 1 MiB, 4,000 blocks, brackets to 64 deep and numbers to 40 characters: no recipe needs more, and a hostile file could stop the machine."},
 	{"RCP-09", "a file that may not be used", "A file outside the repository of the recipe, or files that use each other in a circle."},
 }

@@ -20,6 +20,7 @@ const (
 	mostDepth    = 64
 	mostDigits   = 40
 	mostUnary    = 16
+	mostBraces   = 4000 // blocks and objects
 	mostProblems = 50
 )
 
@@ -111,7 +112,7 @@ func scan(file string, text []byte) *Problem {
 		return refuse("RCP-01", i, "the file holds a zero byte; expected text")
 	}
 	tokens, _ := hclsyntax.LexConfig(text, file, hcl.InitialPos)
-	depth, unary := 0, 0
+	depth, unary, braces := 0, 0, 0
 	for _, t := range tokens {
 		switch t.Type {
 		case hclsyntax.TokenOBrace, hclsyntax.TokenOBrack, hclsyntax.TokenOParen, hclsyntax.TokenTemplateInterp, hclsyntax.TokenTemplateControl, hclsyntax.TokenOQuote:
@@ -124,6 +125,11 @@ func scan(file string, text []byte) *Problem {
 		case hclsyntax.TokenNumberLit:
 			if len(t.Bytes) > mostDigits {
 				return refuse("RCP-08", t.Range.Start.Byte, "a number of %d characters is too long", len(t.Bytes))
+			}
+		}
+		if t.Type == hclsyntax.TokenOBrace {
+			if braces++; braces > mostBraces {
+				return refuse("RCP-08", t.Range.Start.Byte, "the file has more than %d blocks", mostBraces)
 			}
 		}
 		if t.Type == hclsyntax.TokenMinus || t.Type == hclsyntax.TokenBang || t.Type == hclsyntax.TokenQuestion {
