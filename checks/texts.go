@@ -22,7 +22,7 @@ It is wrong when the weighing is known to be better than the tolerance written.`
 
 const feedText = `Where a liquid feed enters, it meets the bulk in every proportion. Somewhere on
 that line a solid may be oversaturated although it is not in the mixed tank.
-Computed on eleven mixtures of feed and bulk at the temperature of the bulk, with
+Computed on twelve mixtures of feed and bulk at the temperature of the bulk, with
 nothing allowed to come down; the worst phase is told, with where on the line.
 When the bulk is well undersaturated with it, the solid dissolves again and this
 is a note: a routine neutralisation is no fault.

@@ -2,7 +2,6 @@ package checks
 
 import (
 	"fmt"
-	"strings"
 
 	"dregs/equilibrium"
 	"dregs/recipe"
@@ -38,10 +37,8 @@ func runMissing(p *Pass) {
 	for _, m := range p.Trace.Missing {
 		f := blank()
 		f.Level = recipe.Note
-		for _, word := range []string{"no data", "cannot", "not computed", "left out", "no part", "nothing is known", "organic", "redox", "boil", "unknown"} {
-			if strings.Contains(m.Why, word) {
-				f.Level = recipe.Caution
-			}
+		if m.Blind {
+			f.Level = recipe.Caution
 		}
 		f.At = m.At
 		f.Message = m.What + ": " + m.Why

@@ -14,4 +14,5 @@ var Codes = []CodeText{
 	{"RCP-07", "a waiver that does not hold", "A waiver without a reason, one whose date has passed, or one that waived nothing. Waivers are renewed or removed; they are no settings."},
 	{"RCP-08", "too large or too deep", "Files are limited to 1 MiB, 4,000 blocks, brackets to 64 deep and numbers to 40 characters: no recipe needs more, and a hostile file could stop the machine."},
 	{"RCP-09", "a file that may not be used", "A file outside the repository of the recipe, or files that use each other in a circle."},
+	{"RCP-10", "a step could not be computed", "No equilibrium was found for the contents of a tank after a step, so what follows in that tank is not computed and nothing is said of it. Look for an amount that is far off, or a charge without water."},
 }

@@ -1,6 +1,9 @@
 package recipe
 
-import "time"
+import (
+	"strings"
+	"time"
+)
 
 // finish checks what can only be told when everything is read: names of
 // materials and phases, and what was defined and never used.
@@ -57,9 +60,12 @@ func (r *reader) stepNames(s *Step) {
 	}
 }
 
+// pureWater needs no water block.
+var pureWater = []string{"water", "demineralised water", "demineralized water", "deionised water", "deionized water", "distilled water", "pure water"}
+
 // materialNamed marks what a step uses, and tells a name that nothing defines.
 func (r *reader) materialNamed(name string, at Range) {
-	names := []string{"water", "demineralised water"}
+	names := append([]string{}, pureWater...)
 	for _, w := range r.recipe.Waters {
 		if w.Name == name {
 			w.Used = true
@@ -81,7 +87,7 @@ func (r *reader) materialNamed(name string, at Range) {
 		}
 		names = append(names, l.Name)
 	}
-	if name == "water" || name == "demineralised water" || r.o.KnownSubstance == nil || r.o.KnownSubstance(name) {
+	if contains(pureWater, strings.ToLower(name)) || r.o.KnownSubstance == nil || r.o.KnownSubstance(name) {
 		return
 	}
 	nearest := Nearest(name, names)

@@ -11,7 +11,7 @@ import (
 // water, a substance of the catalogue, a mineral, or a formula of its components.
 func knownSubstance(name string) bool {
 	switch strings.ToLower(name) {
-	case "water", "demineralised water", "demineralized water", "deionised water", "deionized water", "h2o":
+	case "water", "demineralised water", "demineralized water", "deionised water", "deionized water", "distilled water", "pure water", "h2o":
 		return true
 	}
 	if _, ok := catalogue.Lookup(name); ok {

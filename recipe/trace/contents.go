@@ -45,7 +45,7 @@ func (w *walker) readContents(owner string, list []recipe.Content, at recipe.Ran
 		}
 		what, err := w.contentOf(c.What)
 		if err != nil {
-			w.missing(c.What, fmt.Sprintf("in %q: no data (%v); it is taken as inert and takes no part", owner, err), c.At)
+			w.blind(c.What, fmt.Sprintf("in %q: no data (%v); it is taken as inert and takes no part", owner, err), c.At)
 			m.inert = append(m.inert, line{name: c.What, amount: c.Amount, content: what})
 			continue
 		}

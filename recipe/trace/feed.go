@@ -1,6 +1,10 @@
 package trace
 
-import "dregs/equilibrium"
+import (
+	"fmt"
+
+	"dregs/equilibrium"
+)
 
 // feedFractions are the mixtures looked at: close where the feed is a trace and
 // where it is nearly all, as at the end of a feed pipe.
@@ -21,7 +25,7 @@ func (w *walker) feed(out *Step, bulk *Liquor) {
 
 // mixingLine mixes a feed with what is dissolved in the bulk, at the bulk's
 // temperature, by volume; nothing comes down. Mixtures that cannot be computed
-// are left out.
+// are told as missing.
 func (w *walker) mixingLine(bulk *Liquor, feed []float64, feedL float64) *FeedLine {
 	dissolved := w.dissolved(bulk)
 	totals := make([]float64, len(dissolved))
@@ -36,7 +40,8 @@ func (w *walker) mixingLine(bulk *Liquor, feed []float64, feedL float64) *FeedLi
 				totals[i] = 0
 			}
 		}
-		if w.solver.Solve(totals, &c, st) != nil {
+		if err := w.solver.Solve(totals, &c, st); err != nil {
+			w.blind("the mixing line of the feed", fmt.Sprintf("at %.0f %% feed it could not be computed: %v", 100*f, err), w.at)
 			continue
 		}
 		line.Points = append(line.Points, FeedPoint{FeedFraction: f, PH: st.PH, TempK: bulk.TempK, Index: append([]float64{}, st.Index...)})

@@ -208,6 +208,7 @@ func (w *walker) might(l *Liquor, tempK float64, a air) *Liquor {
 	b.tempK = tempK
 	out, _, err := w.settle(b, a)
 	if err != nil {
+		w.blind("what the liquor may become", fmt.Sprintf("at %.0f °C it could not be computed: %v", tempK-equilibrium.ZeroCelsius, err), w.at)
 		return nil
 	}
 	return out
@@ -216,7 +217,7 @@ func (w *walker) might(l *Liquor, tempK float64, a air) *Liquor {
 // keep settles a batch in the tank of a step.
 func (w *walker) keep(out *Step, b *batch, a air) bool {
 	if b.tempK > boilingK+0.5 {
-		w.missing(out.What, fmt.Sprintf("mixing would reach %.0f °C; the liquor would boil and is computed at 100 °C", b.tempK-equilibrium.ZeroCelsius), out.At)
+		w.blind(out.What, fmt.Sprintf("mixing would reach %.0f °C; the liquor would boil and is computed at 100 °C", b.tempK-equilibrium.ZeroCelsius), out.At)
 	}
 	l, gas, err := w.settle(b, a)
 	if err != nil {

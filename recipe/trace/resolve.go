@@ -152,7 +152,7 @@ func (w *walker) draft(name string, at recipe.Range) *draft {
 		}
 	}
 	switch strings.ToLower(name) {
-	case "water", "demineralised water", "demineralized water", "deionised water", "deionized water", "h2o":
+	case "water", "demineralised water", "demineralized water", "deionised water", "deionized water", "distilled water", "pure water", "h2o":
 		d.mix = &mixture{at: at}
 		return d
 	}
@@ -223,7 +223,7 @@ func (w *walker) draftSubstance(d *draft, name string) {
 		if s.Inert || s.NoData != "" || len(s.Parts) == 0 {
 			d.InertPerKg = 1
 			if !s.Inert {
-				w.missing(d.Name, "no data: "+s.NoData+"; it is taken as inert and takes no part in the computation", d.at)
+				w.blind(d.Name, "no data: "+s.NoData+"; it is taken as inert and takes no part in the computation", d.at)
 			}
 			return
 		}

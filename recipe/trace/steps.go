@@ -1,11 +1,14 @@
 package trace
 
 import (
+	"math"
+
 	"dregs/recipe"
 )
 
 // begin opens the record of a step in a tank.
 func (w *walker) begin(s *recipe.Step, tank *recipe.Tank) *Step {
+	w.at = s.At
 	before := w.tanks[tank]
 	if before == nil {
 		before = w.empty(roomK)
@@ -115,7 +118,7 @@ func (w *walker) step(s *recipe.Step) {
 	case recipe.Sparge:
 		a, known := w.sparged(s)
 		if !known {
-			w.missing(s.Gas, "no data for this gas in the liquor's chemistry; the sparge is taken to change nothing", s.At)
+			w.blind(s.Gas, "no data for this gas in the liquor's chemistry; the sparge is taken to change nothing", s.At)
 		}
 		w.keep(out, w.batchOf(out.Before), a)
 	case recipe.Transfer, recipe.Decant:
@@ -166,6 +169,9 @@ func (w *walker) charge(out *Step, s *recipe.Step) {
 		out.TempRiseK = b.tempK - before
 	}
 	w.undissolved(out)
+	if share := kg / out.After.MassKg; c.Substance != nil && math.IsNaN(c.HeatKJPerKg) && share > 0.05 && out.Before.MassKg > 0 {
+		w.missing(c.Name, "its heat of solution is not known and is not counted in the temperature", out.At)
+	}
 	if s.Kind == recipe.Dose {
 		w.feed(out, out.Before)
 	}

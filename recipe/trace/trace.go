@@ -22,6 +22,9 @@ type Missing struct {
 	Why  string       // in words
 	At   recipe.Range // where it is first used
 	Step *Step        // nil when it holds for the whole recipe
+	// Blind is set when part of the chemistry is left out for it; otherwise
+	// something usual was assumed.
+	Blind bool
 }
 
 // Charged is a material resolved to chemistry.

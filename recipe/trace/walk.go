@@ -24,6 +24,7 @@ type walker struct {
 	tanks  map[*recipe.Tank]*Liquor
 	failed map[*recipe.Tank]bool
 	minute float64
+	at     recipe.Range // of the step being walked
 
 	stage  *recipe.Stage
 	last   map[*recipe.Step]bool // the last step of its stage in its tank
@@ -92,11 +93,21 @@ func (w *walker) missing(what, why string, at recipe.Range) {
 	w.tr.Missing = append(w.tr.Missing, Missing{What: what, Why: why, At: at})
 }
 
+// blind is missing for what leaves part of the chemistry out.
+func (w *walker) blind(what, why string, at recipe.Range) {
+	w.missing(what, why, at)
+	for i := range w.tr.Missing {
+		if m := &w.tr.Missing[i]; m.What == what && m.Why == why {
+			m.Blind = true
+		}
+	}
+}
+
 // Codes of what the walk cannot use; they belong to the recipe as text.
 const (
-	codeUnknown    = "RCP-01" // a name, formula or element that nothing is known of
+	codeUnknown    = "RCP-02" // a name, formula or element that nothing is known of
 	codeImpossible = "RCP-05" // an amount that cannot be
-	codeUnsolved   = "RCP-06" // no equilibrium was found
+	codeUnsolved   = "RCP-10" // no equilibrium was found
 )
 
 func (w *walker) problem(code string, fatal bool, at recipe.Range, expected, format string, args ...any) {
