@@ -115,7 +115,7 @@ func (c *call) judgeAll(files []string, read recipe.Options, limits *rulebook, j
 				if v.usable() {
 					v.judge(limits)
 				}
-				v.trace = nil
+				v.close()
 				verdicts[i] = v
 			}
 		}()

@@ -70,10 +70,7 @@ type problemJSON struct {
 func (c *call) checkJSON(verdicts []*verdict) error {
 	report := checkReport{Schema: schema, Version: version, Recipes: []recipeReport{}, Findings: []findingJSON{}, Caution: caution}
 	for _, v := range verdicts {
-		r := recipeReport{File: v.file, Usable: v.usable(), Findings: []findingJSON{}, Problems: []problemJSON{}, Model: optional(v.model)}
-		if v.recipe != nil {
-			r.Recipe = optional(v.recipe.Name)
-		}
+		r := recipeReport{Recipe: optional(v.title), File: v.file, Usable: v.usable(), Findings: []findingJSON{}, Problems: []problemJSON{}, Model: optional(v.model)}
 		if worst := v.worst(); worst > 0 {
 			r.Worst = optional(worst.String())
 		}

@@ -17,9 +17,11 @@ import (
 
 // verdict is what was found out about one recipe.
 type verdict struct {
-	file     string // as on screens
-	recipe   *recipe.Recipe
-	trace    *trace.Trace // nil after judging: thousands of traces would not fit
+	file     string         // as on screens
+	title    string         // the recipe's name, "" when it could not be read
+	head     string         // revision and batch
+	recipe   *recipe.Recipe // nil once closed
+	trace    *trace.Trace   // nil once closed
 	findings []checks.Finding
 	faults   []recipe.Problem // that make the recipe unusable
 	advice   []recipe.Problem // the other problems of the text
@@ -35,10 +37,21 @@ func (v *verdict) worst() recipe.Level { return checks.Worst(v.findings) }
 
 // name is the recipe's own, or its file.
 func (v *verdict) name() string {
-	if v.recipe != nil && v.recipe.Name != "" {
-		return v.recipe.Name
+	if v.title != "" {
+		return v.title
 	}
 	return v.file
+}
+
+// close lets go of recipe and trace, which thousands of verdicts could not keep.
+// Findings hold on to their step, so they are copied without it.
+func (v *verdict) close() {
+	v.recipe, v.trace, v.advice, v.input = nil, nil, nil, nil
+	for i, f := range v.findings {
+		v.findings[i] = checks.Finding{Code: f.Code, Level: f.Level, Message: f.Message, Recipe: f.Recipe, Stage: f.Stage, Step: f.Step, Tank: f.Tank, At: f.At,
+			Phase: f.Phase, Formula: f.Formula, AmountG: f.AmountG, AmountGPerL: f.AmountGPerL, Index: f.Index, Uncertainty: f.Uncertainty,
+			Probability: f.Probability, Onset: f.Onset, Limits: f.Limits, Evidence: f.Evidence, Remedies: f.Remedies, Waived: f.Waived}
+	}
 }
 
 const mostInput = 1 << 20 // bytes of a recipe, as package recipe has it
@@ -67,6 +80,9 @@ func (c *call) load(path string, o recipe.Options) *verdict {
 	if v.recipe != nil && !anyFatal(problems) {
 		v.trace = trace.Walk(v.recipe, trace.Options{})
 		problems = append(problems, v.trace.Problems...)
+	}
+	if v.recipe != nil {
+		v.title, v.head = v.recipe.Name, headText(v.recipe)
 	}
 	for _, p := range problems {
 		if p.Fatal {

@@ -32,8 +32,10 @@ const caution = checks.Caution
 func main() { os.Exit(run()) }
 
 func run() int {
-	// Short-lived and small: collecting rarely costs little memory and saves time.
+	// Short-lived and small: collecting rarely costs little memory and saves time,
+	// until many recipes are checked at once.
 	debug.SetGCPercent(400)
+	debug.SetMemoryLimit(200 << 20)
 	// A reader that goes away early (head, a pager) ends the output, not the verdict.
 	signal.Ignore(syscall.SIGPIPE)
 	buffered := bufio.NewWriterSize(os.Stdout, 1<<16)

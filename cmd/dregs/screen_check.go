@@ -28,7 +28,7 @@ func (c *call) checkScreen(verdicts []*verdict) {
 // recipe prints one verdict; a clear one in two lines.
 func (p *page) recipe(v *verdict) {
 	p.rule("═")
-	p.ends(v.name(), headText(v), p.strong)
+	p.ends(v.name(), v.head, p.strong)
 	if v.name() != v.file {
 		p.line(p.faint.Sprint(printable(v.file)))
 	}
@@ -59,19 +59,17 @@ func stageText(f checks.Finding) string {
 	return "stage " + f.Stage
 }
 
-func headText(v *verdict) string {
-	if v.recipe == nil {
-		return ""
-	}
+// headText is what stands beside the name of a recipe.
+func headText(r *recipe.Recipe) string {
 	var parts []string
-	if v.recipe.Revision != "" {
-		parts = append(parts, "revision "+v.recipe.Revision)
+	if r.Revision != "" {
+		parts = append(parts, "revision "+r.Revision)
 	}
-	if v.recipe.Batch != nil {
-		parts = append(parts, "batch "+v.recipe.Batch.Text)
+	if r.Batch != nil {
+		parts = append(parts, "batch "+unitText(r.Batch.Text))
 	}
-	if v.recipe.Repeat > 1 {
-		parts = append(parts, fmt.Sprintf("%d batches", v.recipe.Repeat))
+	if r.Repeat > 1 {
+		parts = append(parts, fmt.Sprintf("%d batches", r.Repeat))
 	}
 	return strings.Join(parts, ", ")
 }

@@ -18,7 +18,7 @@ func (c *call) sheetScreen(v *verdict) {
 	p := c.page()
 	sys := v.trace.System
 	p.rule("═")
-	p.ends(v.name(), headText(v), p.strong)
+	p.ends(v.name(), v.head, p.strong)
 	p.line(p.faint.Sprint(printable(v.file)))
 	rows, stages, near := sheetRows(sys, v.trace.Steps)
 	columns := []column{{head: "line", right: true}, {head: "step"}, {head: "tank"}, {head: "min", right: true}, {head: "°C", right: true},
