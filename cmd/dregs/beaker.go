@@ -6,6 +6,7 @@ import (
 
 	"github.com/spf13/cobra"
 
+	"dregs/equilibrium"
 	"dregs/equilibrium/catalogue"
 	"dregs/recipe"
 	"dregs/recipe/trace"
@@ -83,6 +84,9 @@ func beakerPlan(amounts []string, at, headspace string) (*recipe.Recipe, error) 
 	temperature, err := recipe.ParseQuantity(at, recipe.Temperature)
 	if err != nil {
 		return nil, badCallf("option --at: %v", err)
+	}
+	if c := temperature.Value - equilibrium.ZeroCelsius; c < -0.01 || c > 100.01 {
+		return nil, badCallf("option --at: %s is outside what is computed, 0 to 100 °C", unitText(at))
 	}
 	above, err := parseHeadspace(headspace)
 	if err != nil {

@@ -25,7 +25,7 @@ func (c *call) beakerJSON(m *mix) error {
 	report := beakerReport{Schema: schema, Version: version, stepJSON: stepOfJSON(m.trace.System, m.final), Headspace: m.air, Dissolved: []dissolvedJSON{}, Missing: missingOf(m.trace), Caution: caution}
 	report.Step, report.What = "mix", "mix"
 	for _, d := range m.becameOf() {
-		report.Dissolved = append(report.Dissolved, dissolvedJSON{d.name, d.formula, number(d.chargedG), number(d.goneG()), number(d.goneG() / d.litres), number(d.leftG), append([]string{}, d.elsewhere...)})
+		report.Dissolved = append(report.Dissolved, dissolvedJSON{d.name, d.formula, number(d.chargedG), number(d.goneG()), number(d.perL()), number(d.leftG), append([]string{}, d.elsewhere...)})
 	}
 	return writeJSON(c.out, report)
 }

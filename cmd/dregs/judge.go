@@ -40,6 +40,9 @@ func (v *verdict) name() string {
 	if v.title != "" {
 		return v.title
 	}
+	if v.file == "-" {
+		return "standard input"
+	}
 	return v.file
 }
 

@@ -70,6 +70,9 @@ func massText(massG float64) string {
 
 // strengthText writes grams in a litre.
 func strengthText(gPerL float64) string {
+	if math.IsNaN(gPerL) {
+		return "-"
+	}
 	if math.Abs(gPerL) < 0.1 {
 		return figures(1000*gPerL, 3) + " mg/L"
 	}

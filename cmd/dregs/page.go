@@ -86,7 +86,9 @@ func (p *page) hang(indent int, label string, labelWidth int, text string, ink *
 
 // caution ends the page.
 func (p *page) caution() {
-	p.line()
+	if !strings.HasSuffix(p.String(), "\n\n") {
+		p.line()
+	}
 	for _, row := range wrap(caution, p.width) {
 		p.line(p.faint.Sprint(row))
 	}

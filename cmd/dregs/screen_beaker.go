@@ -18,7 +18,21 @@ type dissolving struct {
 	elsewhere               []string // solids that hold part of what dissolved
 }
 
-func (d dissolving) goneG() float64 { return math.Max(0, d.chargedG-d.leftG) }
+// goneG is what is no longer there as the solid; less than a billionth is rounding.
+func (d dissolving) goneG() float64 {
+	if gone := d.chargedG - d.leftG; gone > 1e-9*d.chargedG {
+		return gone
+	}
+	return 0
+}
+
+// perL is that in a litre of solution, NaN without one.
+func (d dissolving) perL() float64 {
+	if d.litres <= 0 {
+		return math.NaN()
+	}
+	return d.goneG() / d.litres
+}
 
 // becameOf sums what was charged of each solid and what of it still stands there.
 func (m *mix) becameOf() []dissolving {
@@ -96,7 +110,7 @@ func (c *call) beakerScreen(m *mix) {
 		row("density", fixed(sys.SolutionMassKg(st)/l.SolutionL, 4)+" kg/L without solids")
 	}
 	row("volume", volumeText(l.VolumeL)+" with solids")
-	row("mass", massText(1000*l.MassKg))
+	row("mass", figures(l.MassKg, 5)+" kg")
 	p.dissolved(m)
 	row("solids", solidsText(sys, l))
 	row("closest solids", orNone(nearText(closest(sys, l, 5))))
@@ -130,7 +144,7 @@ func (p *page) dissolved(m *mix) {
 	p.line()
 	var rows [][]string
 	for _, d := range list {
-		rows = append(rows, []string{d.name, ionText(d.formula), massText(d.chargedG), massText(d.goneG()), strengthText(d.goneG() / d.litres), orWord(d.leftG, "nothing")})
+		rows = append(rows, []string{d.name, ionText(d.formula), massText(d.chargedG), massText(d.goneG()), strengthText(d.perL()), orWord(d.leftG, "nothing")})
 	}
 	p.table(0, []column{{head: "charged solid"}, {head: "as", drop: 1}, {head: "charged", right: true}, {head: "dissolved", right: true}, {head: "per L of solution", right: true}, {head: "stays", right: true}}, rows)
 	for _, d := range list {

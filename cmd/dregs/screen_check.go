@@ -29,7 +29,7 @@ func (c *call) checkScreen(verdicts []*verdict) {
 func (p *page) recipe(v *verdict) {
 	p.rule("═")
 	p.ends(v.name(), v.head, p.strong)
-	if v.name() != v.file {
+	if v.title != "" && v.file != "-" {
 		p.line(p.faint.Sprint(printable(v.file)))
 	}
 	stage, at, open := "", recipe.Range{}, false
