@@ -1,7 +1,6 @@
 package equilibrium
 
 import (
-	"fmt"
 	"math"
 	"testing"
 )
@@ -355,7 +354,7 @@ func TestCarbonDioxideInWater(t *testing.T) {
 		}
 		st := mustSolve(t, s, totalsOf(s, map[string]float64{"H2O": kgWater}), c)
 		got := st.GasInMol[0]
-		t.Log(fmt.Sprintf("%g °C: %.4f mol/kg, published %.4f", tempC, got, want))
+		t.Logf("%g °C: %.4f mol/kg, published %.4f", tempC, got, want)
 		if math.Abs(got/want-1) > 0.04 {
 			t.Errorf("%g °C: %.4f mol/kg, want %.4f", tempC, got, want)
 		}
