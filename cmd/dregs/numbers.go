@@ -85,7 +85,7 @@ func indexText(index, uncertainty float64) string {
 		return "-"
 	}
 	text := fixed(index, 2)
-	if index >= 0 && text[0] != '-' {
+	if text[0] != '-' {
 		text = "+" + text
 	}
 	if !math.IsNaN(uncertainty) {
