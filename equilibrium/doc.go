@@ -29,9 +29,11 @@
 //
 //   - elements.go, formula.go: atomic weights and chemical formulas
 //   - reaction.go, logk.go: reactions and their constants against temperature
-//   - database.go: the tables under tables/, loaded once
-//   - water.go, density.go, heat.go: properties of water and of liquors
+//   - database.go, read.go: the tables under tables/, loaded once
+//   - water.go, density.go: properties of water and of liquors
 //   - activity.go: activity coefficients (extended Debye-Hückel with specific
 //     ion interaction terms)
-//   - system.go, solver.go, qp.go, state.go: the equilibrium itself
+//   - system.go, state.go: what can form, and what did
+//   - solver.go (the method), pose.go (its index tables), start.go (where it
+//     starts), qp.go, anderson.go (its two tools), report.go (the answer)
 package equilibrium

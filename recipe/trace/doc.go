@@ -25,7 +25,7 @@
 //
 // # Reading order
 //
-// trace.go (the types), walk.go and steps.go (the course of a batch), liquor.go
+// trace.go (the types), walk.go and steps.go (from step to step), liquor.go
 // and mixing.go (contents of a tank and how they come to equilibrium),
 // transfer.go, titrate.go (adjust, make up, evaporate), gas.go, dissolve.go and
 // feed.go (what might have been); resolve.go, contents.go, names.go, waters.go, carbonate.go
