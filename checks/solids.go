@@ -249,9 +249,17 @@ func Ion(name string) string {
 	return lowered.Replace(name[:at]) + strings.NewReplacer("0", "⁰", "1", "¹", "2", "²", "3", "³", "4", "⁴", "5", "⁵", "6", "⁶", "7", "⁷", "8", "⁸", "9", "⁹", "+", "⁺", "-", "⁻").Replace(name[at+1:])
 }
 
-// raise brings the level of a solid down to a note when it is a trace.
+// byAmount takes the level of a solid down: a trace is a note, a bloom that filters
+// off no stop.
 func (p *Pass) byAmount(f *Finding) {
-	if f.AmountGPerL < p.Thresholds.HazeGPerL {
+	level := f.Level
+	if level == 0 {
+		level = p.Rule.Level
+	}
+	switch {
+	case f.AmountGPerL < p.Thresholds.HazeGPerL:
 		f.Level = recipe.Note
+	case f.AmountGPerL < p.Thresholds.BloomGPerL && level == recipe.Stop:
+		f.Level = recipe.Caution
 	}
 }

@@ -88,7 +88,7 @@ The amount is that at equilibrium. The saturation index is that of the liquor
 before anything new came down, ± one standard uncertainty of the phase's constant
 and of the activity model; the probability follows from the two. What limits the
 amount are the ions of which most comes down.
-Less than 5 mg/L is a note. Solids that form slowly are left to SOL-05, slight
+Less than 5 mg/L is a note, less than 50 mg/L a caution. Solids that form slowly are left to SOL-05, slight
 oversaturation to SAT-02.
 Use two tanks, less of one charge, another pH, a complexing agent, softened water;
 or say that it is planned: expect "phase" { }.

@@ -12,6 +12,7 @@ import (
 // stands beside its value in the standard ruleset.
 type Thresholds struct {
 	HazeGPerL      float64
+	BloomGPerL     float64
 	ZoneSparing    float64
 	ZoneSoluble    float64
 	FeedIndex      float64
@@ -29,6 +30,7 @@ func (t *Thresholds) places() map[string]place {
 	const gPerKg = 1000
 	return map[string]place{
 		"haze":              {&t.HazeGPerL, gPerKg},
+		"bloom":             {&t.BloomGPerL, gPerKg},
 		"zone_sparing":      {&t.ZoneSparing, 1},
 		"zone_soluble":      {&t.ZoneSoluble, 1},
 		"feed_index":        {&t.FeedIndex, 1},

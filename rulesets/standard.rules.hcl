@@ -9,6 +9,7 @@ ruleset "standard" {
 
 limits {
   haze              = "5 mg/L"   # solid below this is a note: hardly seen in a glass; common practice, no source
+  bloom             = "50 mg/L"  # a stop of an unplanned solid below this is a caution: a bloom that filters off; common practice, no source
   zone_sparing      = 0.3        # saturation index below which a sparingly soluble solid may stay away for a while; common practice, no source
   zone_soluble      = 0.03       # the same for a very soluble salt; common practice, no source
   feed_index        = 0.5        # peak saturation index on the mixing line that is worth telling; common practice, no source
