@@ -25,16 +25,32 @@ type newSolid struct {
 func (p *Pass) newSolids() []newSolid {
 	var out []newSolid
 	content := map[*recipe.Tank]*trace.Liquor{}
+	told := map[string]float64{} // mol told so far, by tank and phase
+	// news tells whether so much of a phase is new to a tank, or half as much again
+	// as was told of before.
+	news := func(t *recipe.Tank, phase int, mol float64) bool {
+		key := fmt.Sprint(t.Name, "|", phase)
+		if mol <= 1.5*told[key] {
+			return false
+		}
+		told[key] = mol
+		return true
+	}
 	for _, s := range p.Trace.Steps {
 		if s.After != nil {
 			for _, solid := range s.After.Solids {
 				before := molOf(s.Before, solid.Phase)
-				if ofCharge(s, solid.Phase) || solid.Mol <= before*1.1 || p.planned(solid.Phase, s) {
+				if ofCharge(s, solid.Phase) || solid.Mol <= before*1.1 || p.planned(solid.Phase, s) || !news(s.Tank, solid.Phase, solid.Mol) {
 					continue
 				}
 				out = append(out, newSolid{s, solid.Phase, solid.Mol - before, s.After, ""})
 			}
 			content[s.Tank] = s.After
+			for i := range p.Trace.System.Phases {
+				if molOf(s.After, i) == 0 {
+					delete(told, fmt.Sprint(s.Tank.Name, "|", i)) // gone: the next time is news
+				}
+			}
 		}
 		if s.Into != nil && s.IntoAfter != nil {
 			for _, solid := range s.IntoAfter.Solids {
@@ -44,7 +60,7 @@ func (p *Pass) newSolids() []newSolid {
 						before += c.Mol
 					}
 				}
-				if solid.Mol > before*1.1 && !p.planned(solid.Phase, s) {
+				if solid.Mol > before*1.1 && !p.planned(solid.Phase, s) && news(s.Into, solid.Phase, solid.Mol) {
 					out = append(out, newSolid{s, solid.Phase, solid.Mol - before, s.IntoAfter, s.Into.Name})
 				}
 			}

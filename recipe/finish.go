@@ -11,14 +11,8 @@ func (r *reader) finish() {
 	if r.recipe == nil {
 		return
 	}
-	inFile := map[string]bool{}
-	for _, p := range r.problems {
-		if p.Code == "RCP-01" || p.Code == "RCP-08" {
-			inFile[p.At.File] = true
-		}
-	}
-	if len(inFile) > 0 {
-		return // what follows from a file that could not be read is not told
+	if r.unread() {
+		return
 	}
 	for _, t := range r.recipe.Tanks {
 		if t.Heel != nil && t.Used {
@@ -39,6 +33,26 @@ func (r *reader) finish() {
 		}
 	}
 	r.unused()
+}
+
+// unread tells whether a file could not be read or used. What follows from that,
+// names that it would have defined, is then not told.
+func (r *reader) unread() bool {
+	missing := false
+	for _, p := range r.problems {
+		missing = missing || p.Code == "RCP-01" || p.Code == "RCP-08" || p.Code == "RCP-09"
+	}
+	if !missing {
+		return false
+	}
+	kept := r.problems[:0]
+	for _, p := range r.problems {
+		if p.Code != "RCP-02" && p.Code != "RCP-05" {
+			kept = append(kept, p)
+		}
+	}
+	r.problems = kept
+	return true
 }
 
 func (r *reader) stepNames(s *Step) {

@@ -51,6 +51,8 @@ func (w *walker) adjust(out *Step, s *recipe.Step) {
 		}
 		most, bounded = kg, true
 	}
+	const close = 1e-4    // pH, where the search ends
+	const readable = 0.02 // pH, what an electrode tells apart; common practice, no source
 	var stands, read *Liquor
 	var gas []GasAmount
 	var err error
@@ -71,12 +73,12 @@ func (w *walker) adjust(out *Step, s *recipe.Step) {
 			w.fail(s.Tank, out.At, out.What, err)
 			return
 		}
-		out.Charged, out.ChargedKg, out.ChargedMol, out.AdjustReached = c, kg, kg*c.molPerKg, reached
+		out.Charged, out.ChargedKg, out.ChargedMol = c, kg, kg*c.molPerKg
+		out.AdjustReached = reached && math.Abs(read.State.PH-s.PH.Value) < readable
 		out.After, out.AtSample, out.GasOut = stands, read, gas
 		out.TempRiseK = stands.TempK - out.Before.TempK
 		w.undissolved(out)
 	}
-	const close = 1e-4 // pH
 	low, missLow := 0.0, miss(0)
 	if err != nil || math.Abs(missLow) < close {
 		finish(0, true)
