@@ -9,6 +9,7 @@ import (
 	"strconv"
 	"strings"
 	"testing"
+	"time"
 
 	"github.com/rogpeppe/go-internal/txtar"
 
@@ -62,6 +63,7 @@ func wantedIn(t *testing.T, text string) []wanted {
 func readOptions() recipe.Options {
 	db := equilibrium.Default()
 	return recipe.Options{
+		Today: time.Date(2026, 12, 1, 12, 0, 0, 0, time.UTC),
 		KnownSubstance: func(name string) bool {
 			if _, ok := catalogue.Lookup(name); ok {
 				return true
@@ -100,7 +102,7 @@ func findingsUnder(t *testing.T, name, text string, limits *Thresholds) []Findin
 // other stop or caution, of whatever rule, is a fault. The amounts come from handbook
 // solubilities, as told in the recipes, not from the program.
 func TestRulesOnTheirRecipes(t *testing.T) {
-	for _, rule := range All {
+	for _, rule := range append(append([]*Rule{}, All...), &Rule{Code: "RCP-06"}, &Rule{Code: "RCP-07"}) {
 		path := filepath.Join("testdata", rule.Code+".txtar")
 		if _, err := os.Stat(path); err != nil {
 			t.Errorf("rule %s has no recipes", rule.Code)
@@ -153,7 +155,7 @@ func compare(t *testing.T, rule *Rule, findings []Finding, expected []wanted) {
 			}
 			ok, w.met = true, true
 		}
-		if !ok && (f.Level >= recipe.Caution) {
+		if !ok && (f.Level >= recipe.Caution || strings.HasPrefix(f.Code, "RCP")) {
 			t.Errorf("not expected: line %d %s %s: %s", f.At.Line, f.Level, f.Code, f.Message)
 		}
 	}

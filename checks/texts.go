@@ -155,5 +155,6 @@ const lowText = `More is taken out than there is, or the tank is stirred, heated
 in it than the stirrer needs.`
 
 const ratingText = `The temperature after the step is outside what the tank is rated for. Heat of
-mixing is counted where the heat of solution is known; dilution of strong acids
-and caustic is not yet, so a strong acid in little water may be hotter.`
+solution is counted where the catalogue knows it, to infinite dilution; heat of
+neutralisation is not, so a tank may get hotter than told.
+Heat or cool less, dose more slowly, or use a tank that is rated for it.`
