@@ -127,7 +127,8 @@ const rangeText = `The liquor is stronger, hotter or colder than the activity mo
 figures are carried on, with a larger uncertainty.
 The model: extended Debye-Hückel with specific ion interaction, to 3 mol/kg. Salts
 calibrated on handbook solubilities come out right alone at any strength; their
-mixtures are less sure.
+mixtures are less sure. Or a solid stands at a temperature for which its source
+gives no constant: it is carried on with its enthalpy, or as it is.
 Trust the direction more than the number, and try it in the laboratory.`
 
 const missingText = `Something was left out or taken on trust: an ingredient without data, a material

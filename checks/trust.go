@@ -8,8 +8,13 @@ import (
 	"dregs/recipe/trace"
 )
 
-// runRange tells the first step of each tank that leaves the range of the model.
 func runRange(p *Pass) {
+	runStrength(p)
+	runConstants(p)
+}
+
+// runStrength tells the first step of each tank that leaves the range of the model.
+func runStrength(p *Pass) {
 	told := map[string]bool{}
 	for _, s := range p.Trace.Steps {
 		if s.After == nil || s.After.State == nil || !(s.After.State.WaterKg > 0) {
@@ -30,6 +35,39 @@ func runRange(p *Pass) {
 		f.Evidence = []string{p.Trace.System.ModelName()}
 		p.Report(s, f)
 	}
+}
+
+// runConstants tells solids whose constant is used outside the temperatures that
+// its source vouches for, once a recipe.
+func runConstants(p *Pass) {
+	told := map[int]bool{}
+	for _, s := range p.Trace.Steps {
+		if s.After == nil {
+			continue
+		}
+		for _, solid := range s.After.Solids {
+			ph := p.Trace.System.Phases[solid.Phase]
+			if told[solid.Phase] || ph.LogK.InRange(s.After.TempK) {
+				continue
+			}
+			told[solid.Phase] = true
+			f := blank()
+			f.Level = recipe.Note
+			f.Phase, f.Formula = ph.Name, ph.Formula
+			f.Uncertainty = ph.LogK.UncertaintyAt(s.After.TempK)
+			f.Message = fmt.Sprintf("%s stands at %.0f °C; its constant is for %s: the amount is less sure (± %.1f in log K)",
+				ph.Name, s.After.TempK-equilibrium.ZeroCelsius, span(ph.LogK.MinC, ph.LogK.MaxC), f.Uncertainty)
+			f.Evidence = p.evidence(solid.Phase, s.After.State)
+			p.Report(s, f)
+		}
+	}
+}
+
+func span(low, high float64) string {
+	if high-low < 0.5 {
+		return fmt.Sprintf("%.0f °C", low)
+	}
+	return fmt.Sprintf("%.0f to %.0f °C", low, high)
 }
 
 // runMissing tells what the computation left out or took on trust.
