@@ -24,7 +24,7 @@ type quadratic struct {
 	x          []float64 // multipliers by constraint
 	shift      []float64 // part of x that is in the gradient already
 
-	factor []float64 // Cholesky factor of the scaled H
+	factor []float64 // Cholesky factor of the scaled H; its diagonal holds reciprocals
 	scale  []float64
 	base   []float64 // −L⁻¹S(g + Σ shift a)
 	normal []float64 // L⁻¹ a_i for each of the working set, row by row
@@ -225,26 +225,12 @@ func (q *quadratic) halfSolve(n int, v []float64) {
 	for i := range v {
 		v[i] *= q.scale[i]
 	}
-	l := q.factor
-	for i := 0; i < n; i++ {
-		s := v[i]
-		for j := 0; j < i; j++ {
-			s -= l[i*n+j] * v[j]
-		}
-		v[i] = s * l[i*n+i] // the diagonal holds reciprocals
-	}
+	forward(q.factor, n, v)
 }
 
 // backSolve turns v into S L⁻ᵀ v.
 func (q *quadratic) backSolve(n int, v []float64) {
-	l := q.factor
-	for i := n - 1; i >= 0; i-- {
-		s := v[i] * l[i*n+i]
-		v[i] = s
-		for j := 0; j < i; j++ {
-			v[j] -= l[i*n+j] * s
-		}
-	}
+	backward(q.factor, n, v)
 	for i := range v {
 		v[i] *= q.scale[i]
 	}
@@ -383,38 +369,50 @@ func (q *quadratic) add(n, i int, g, rows, rhs, lambda, d []float64) bool {
 // which shortens the step along that direction instead of failing.
 func cholesky(a []float64, n int) {
 	for i := 0; i < n; i++ {
-		diagonal := a[i*n+i]
-		for j := 0; j < i; j++ {
-			s := a[i*n+j]
-			for k := 0; k < j; k++ {
-				s -= a[i*n+k] * a[j*n+k]
-			}
-			a[i*n+j] = s * a[j*n+j]
-		}
+		row := a[i*n : i*n+i+1]
+		diagonal := row[i]
 		s := diagonal
-		for k := 0; k < i; k++ {
-			s -= a[i*n+k] * a[i*n+k]
+		for j := 0; j < i; j++ {
+			other := a[j*n : j*n+j+1]
+			v := row[j]
+			for k, o := range other[:j] {
+				v -= row[k] * o
+			}
+			v *= other[j]
+			row[j] = v
+			s -= v * v
 		}
 		if !(s > 1e-14*diagonal) {
 			s = 1e-14*diagonal + 1e-300
 		}
-		a[i*n+i] = 1 / math.Sqrt(s)
+		row[i] = 1 / math.Sqrt(s)
 	}
 }
 
 func choleskySolve(l []float64, n int, v []float64) {
+	forward(l, n, v)
+	backward(l, n, v)
+}
+
+// forward turns v into L⁻¹ v, backward into L⁻ᵀ v.
+func forward(l []float64, n int, v []float64) {
 	for i := 0; i < n; i++ {
+		row := l[i*n : i*n+i+1]
 		s := v[i]
-		for j := 0; j < i; j++ {
-			s -= l[i*n+j] * v[j]
+		for j, a := range row[:i] {
+			s -= a * v[j]
 		}
-		v[i] = s * l[i*n+i]
+		v[i] = s * row[i]
 	}
+}
+
+func backward(l []float64, n int, v []float64) {
 	for i := n - 1; i >= 0; i-- {
-		s := v[i] * l[i*n+i]
+		row := l[i*n : i*n+i+1]
+		s := v[i] * row[i]
 		v[i] = s
-		for j := 0; j < i; j++ {
-			v[j] -= l[i*n+j] * s
+		for j, a := range row[:i] {
+			v[j] -= a * s
 		}
 	}
 }

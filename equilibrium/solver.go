@@ -58,12 +58,13 @@ type Solver struct {
 	step          []float64
 	quad          quadratic
 
-	posed   pose
-	mix     anderson
-	molal   []float64
-	gammas  []float64
-	image   []float64 // γ of the molalities reached
-	newtons int
+	posed    pose
+	mix      anderson
+	molal    []float64
+	gammas   []float64
+	image    []float64 // γ of the molalities reached
+	newtons  int
+	lastStep float64
 }
 
 // pose is what the index tables were made for.
@@ -209,6 +210,9 @@ func (sv *Solver) outer(damping float64) error {
 		change = sv.mix.residual(sv.gammas, sv.image, lnWater, lnMass)
 		if change < gammaTol {
 			sv.evaluate(sv.lambda[:len(sv.active)]) // exactly, not by series
+			if sv.lastStep < 1e-7 {
+				return nil // the next step would be its square
+			}
 			return sv.newton(1e-7)
 		}
 		if sv.mix.lnMass < -9 {
@@ -348,7 +352,7 @@ func (sv *Solver) newton(tol float64) error {
 				lambda[i] += sv.step[i]
 			}
 			sv.follow(sv.step[:m], nil)
-			if longest < tol {
+			if sv.lastStep = longest; longest < tol {
 				return nil
 			}
 			continue
