@@ -97,8 +97,9 @@ func newInteractions(db *Database, species []*Species) interactions {
 	return t
 }
 
-// activity evaluates ln γ of every species and ln a_w from molalities.
-func (t *interactions) activity(aphi float64, charge, molality, lnGamma []float64) (ionicStrength, lnWater, sumMolality float64) {
+// activity evaluates ln γ of every species and ln a_w from molalities; scratch has
+// room for twice the species.
+func (t *interactions) activity(aphi float64, charge, molality, lnGamma, scratch []float64) (ionicStrength, lnWater, sumMolality float64) {
 	ionic, total := 0.0, 0.0
 	for i, m := range molality {
 		ionic += m * charge[i] * charge[i]
@@ -119,22 +120,27 @@ func (t *interactions) activity(aphi float64, charge, molality, lnGamma []float6
 	for i := range lnGamma {
 		lnGamma[i] = 0
 	}
+	// The anions' molalities and sums stand one behind the other in scratch.
 	na := len(t.anions)
+	anions, sums := scratch[:na], scratch[na:2*na]
+	for ia, a := range t.anions {
+		anions[ia], sums[ia] = molality[a], 0
+	}
 	for ic, c := range t.cations {
 		row := t.epsilon[ic*na : ic*na+na]
 		mc, sum := molality[c], 0.0
 		if mc < traceMolality {
-			for ia, a := range t.anions {
-				sum += row[ia] * molality[a]
-			}
+			sum = dot(row, anions)
 		} else {
-			for ia, a := range t.anions {
-				e := row[ia]
-				sum += e * molality[a]
-				lnGamma[a] += e * mc
+			for ia, e := range row {
+				sum += e * anions[ia]
+				sums[ia] += e * mc
 			}
 		}
 		lnGamma[c] = sum
+	}
+	for ia, a := range t.anions {
+		lnGamma[a] = sums[ia]
 	}
 	pairs := 0.0 // Σ_{pairs} ε m m
 	for _, c := range t.cations {

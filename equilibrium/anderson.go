@@ -13,6 +13,7 @@ type anderson struct {
 	dy, df       [andersonDepth][]float64
 	count, next  int
 	have         bool
+	gram         [andersonDepth][andersonDepth]float64 // Δf_i·Δf_j
 	matrix       [andersonDepth * andersonDepth]float64
 	theta        [andersonDepth]float64
 	best         float64
@@ -70,25 +71,35 @@ func (a *anderson) advance(gammas []float64, damping float64) {
 		for i := 0; i < n; i++ {
 			dy[i], df[i] = a.y[i]-a.yLast[i], a.f[i]-a.fLast[i]
 		}
-		a.next = (a.next + 1) % andersonDepth
 		if a.count < andersonDepth {
 			a.count++
 		}
+		for j := 0; j < a.count; j++ {
+			a.gram[a.next][j] = dot(df, a.df[j])
+			a.gram[j][a.next] = a.gram[a.next][j]
+		}
+		a.next = (a.next + 1) % andersonDepth
 	}
 	copy(a.yLast, a.y)
 	copy(a.fLast, a.f)
 	a.have = true
 	a.solveTheta()
-	longest := 0.0
-	for i := 0; i < n; i++ {
-		next := a.y[i] + a.f[i]
-		for j := 0; j < a.count; j++ {
-			next -= a.theta[j] * (a.dy[j][i] + a.df[j][i])
+	// the move into f, history by history
+	for j := 0; j < a.count; j++ {
+		theta, dy, df := a.theta[j], a.dy[j][:n], a.df[j][:n]
+		for i := range df {
+			a.f[i] -= theta * (dy[i] + df[i])
 		}
-		if move := math.Abs(next - a.y[i]); !(move <= longest) {
+	}
+	longest := 0.0
+	for i, move := range a.f {
+		a.y[i] += move
+		if move < 0 {
+			move = -move
+		}
+		if !(move <= longest) {
 			longest = move
 		}
-		a.y[i] = next
 	}
 	if longest > 3 || math.IsNaN(longest) { // a wild extrapolation: damped step, forget
 		for i := 0; i < n; i++ {
@@ -115,7 +126,7 @@ func (a *anderson) solveTheta() {
 	}
 	for i := 0; i < m; i++ {
 		for j := 0; j <= i; j++ {
-			a.matrix[i*m+j] = dot(a.df[i], a.df[j])
+			a.matrix[i*m+j] = a.gram[i][j]
 		}
 		a.theta[i] = dot(a.df[i], a.fLast)
 	}

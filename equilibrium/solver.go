@@ -63,6 +63,7 @@ type Solver struct {
 	molal    []float64
 	gammas   []float64
 	image    []float64 // γ of the molalities reached
+	scratch  []float64 // of the activity model
 	newtons  int
 	lastStep float64
 }
@@ -124,7 +125,7 @@ func (s *System) NewSolver() *Solver {
 		pairStart: make([]int32, 0, ns+1), pairAt: make([]int32, 0, pairs), pair: make([]float64, 0, pairs),
 		cons: make([]constraint, 0, most), rows: f(most * nc), rhs: f(most),
 		lambda: f(nc), trial: f(nc), n: f(ns), lnC: f(ns), lnNext: f(ns), gradient: f(nc), hessian: f(nc * nc), step: f(nc),
-		molal: f(ns), gammas: f(ns), image: f(ns),
+		molal: f(ns), gammas: f(ns), image: f(ns), scratch: f(2 * ns),
 	}
 	sv.posed = pose{present: make([]bool, nc), allowed: make([]bool, np), gasBar: f(ng)}
 	sv.quad.init(nc, most)
@@ -204,7 +205,7 @@ func (sv *Solver) outer(damping float64) error {
 			con := &sv.cons[w]
 			bound += sv.quad.x[w] * con.water
 		}
-		_, lnWater, _ := s.interactions.activity(sv.aphi, s.charge, sv.molal, sv.image)
+		_, lnWater, _ := s.interactions.activity(sv.aphi, s.charge, sv.molal, sv.image, sv.scratch)
 		free := sv.b[water] - bound
 		lnMass := math.Log(math.Max(free*waterMolarMass, mass*0.5))
 		change = sv.mix.residual(sv.gammas, sv.image, lnWater, lnMass)

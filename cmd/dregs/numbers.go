@@ -115,10 +115,10 @@ func percentText(share float64) string {
 	return fixed(100*share, 0) + " %"
 }
 
-// rounded keeps eight significant figures: more than any constant has, and few
+// rounded keeps six significant figures: more than any constant has, and few
 // enough that the last bits of the arithmetic do not show in files.
 func rounded(x float64) float64 {
-	y, err := strconv.ParseFloat(strconv.FormatFloat(x, 'g', 8, 64), 64)
+	y, err := strconv.ParseFloat(strconv.FormatFloat(x, 'g', 6, 64), 64)
 	if err != nil || y == 0 {
 		return 0
 	}
