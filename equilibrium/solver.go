@@ -58,14 +58,15 @@ type Solver struct {
 	step          []float64
 	quad          quadratic
 
-	posed    pose
-	mix      anderson
-	molal    []float64
-	gammas   []float64
-	image    []float64 // γ of the molalities reached
-	scratch  []float64 // of the activity model
-	newtons  int
-	lastStep float64
+	rampBar, rampFrom []float64 // pressures on the way, see ramp
+	posed             pose
+	mix               anderson
+	molal             []float64
+	gammas            []float64
+	image             []float64 // γ of the molalities reached
+	scratch           []float64 // of the activity model
+	newtons           int
+	lastStep          float64
 }
 
 // pose is what the index tables were made for.
@@ -128,6 +129,7 @@ func (s *System) NewSolver() *Solver {
 		molal: f(ns), gammas: f(ns), image: f(ns), scratch: f(2 * ns),
 	}
 	sv.posed = pose{present: make([]bool, nc), allowed: make([]bool, np), gasBar: f(ng)}
+	sv.rampBar, sv.rampFrom = f(ng), f(ng)
 	sv.quad.init(nc, most)
 	sv.mix.init(ns + 2)
 	return sv
@@ -145,6 +147,15 @@ func (sv *Solver) Solve(totals []float64, c *Conditions, out *State) error {
 	if !(c.TempK > 200 && c.TempK < 500) {
 		return fmt.Errorf("temperature %.1f K is outside 200 to 500 K", c.TempK)
 	}
+	err := sv.attempt(totals, c, out)
+	if errors.Is(err, ErrNotConverged) && c.GasBar != nil {
+		err = sv.ramp(totals, c, out)
+	}
+	return err
+}
+
+// attempt solves from the warm start that out holds, then from cold ones.
+func (sv *Solver) attempt(totals []float64, c *Conditions, out *State) error {
 	if err := sv.pose(totals, c); err != nil {
 		return err
 	}

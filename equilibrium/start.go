@@ -97,3 +97,36 @@ func (sv *Solver) warm(st *State, scaleKg float64) {
 		}
 	}
 }
+
+// rampSteps is in how many steps a gas pressure is brought to its value.
+const rampSteps = 12
+
+// ramp comes to a gas pressure that no start reached, hydrogen sulfide over lead
+// for one: first closed, then from the pressure that the liquor has of itself to
+// the one given, in equal steps of its logarithm.
+func (sv *Solver) ramp(totals []float64, c *Conditions, out *State) error {
+	between := *c
+	between.GasBar = sv.rampBar
+	for g := range sv.rampBar {
+		sv.rampBar[g] = 0
+	}
+	if err := sv.attempt(totals, &between, out); err != nil {
+		return err
+	}
+	copy(sv.rampFrom, out.GasBar)
+	for k := 1; k <= rampSteps; k++ {
+		for g, bar := range c.GasBar {
+			if bar > 0 {
+				from := math.Log(math.Max(sv.rampFrom[g], 1e-14))
+				sv.rampBar[g] = math.Exp(from + (math.Log(bar)-from)*float64(k)/rampSteps)
+			}
+		}
+		if k == rampSteps {
+			between.GasBar = c.GasBar
+		}
+		if err := sv.attempt(totals, &between, out); err != nil {
+			return err
+		}
+	}
+	return nil
+}
