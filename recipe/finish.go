@@ -40,14 +40,18 @@ func (r *reader) finish() {
 func (r *reader) unread() bool {
 	missing := false
 	for _, p := range r.problems {
-		missing = missing || p.Code == "RCP-01" || p.Code == "RCP-08" || p.Code == "RCP-09"
+		missing = missing || p.Message != furtherProblems && (p.Code == "RCP-01" || p.Code == "RCP-08" || p.Code == "RCP-09")
 	}
 	if !missing {
 		return false
 	}
 	kept := r.problems[:0]
 	for _, p := range r.problems {
-		if p.Code != "RCP-02" && p.Code != "RCP-05" {
+		follows := false
+		for _, start := range []string{"there is no tank", "there is no phase", "nothing is known of"} {
+			follows = follows || strings.HasPrefix(p.Message, start)
+		}
+		if !follows && !strings.HasSuffix(p.Message, " has no tank") {
 			kept = append(kept, p)
 		}
 	}

@@ -21,6 +21,7 @@ const (
 	mostDigits   = 40
 	mostUnary    = 16
 	mostBraces   = 4000 // blocks and objects
+	mostTokens   = 200_000
 	mostProblems = 50
 )
 
@@ -51,15 +52,17 @@ func readFile(path string) ([]byte, error) {
 	return text, nil
 }
 
-// inside tells whether path, symbolic links followed, lies in root.
+// inside tells whether path, symbolic links followed, lies in root. A file that is
+// not there is judged by its path alone.
 func inside(root, path string) bool {
-	r, err1 := filepath.EvalSymlinks(root)
-	p, err2 := filepath.EvalSymlinks(path)
-	if err1 != nil || err2 != nil {
-		return err2 != nil && err1 == nil // a missing file is told as missing
+	if resolved, err := filepath.EvalSymlinks(path); err == nil {
+		path = resolved
+		if root, err = filepath.EvalSymlinks(root); err != nil {
+			return false
+		}
 	}
-	r, err1 = filepath.Abs(r)
-	p, err2 = filepath.Abs(p)
+	r, err1 := filepath.Abs(root)
+	p, err2 := filepath.Abs(path)
 	if err1 != nil || err2 != nil {
 		return false
 	}
@@ -112,7 +115,11 @@ func scan(file string, text []byte) *Problem {
 		return refuse("RCP-01", i, "the file holds a zero byte; expected text")
 	}
 	tokens, _ := hclsyntax.LexConfig(text, file, hcl.InitialPos)
+	if len(tokens) > mostTokens {
+		return refuse("RCP-08", tokens[mostTokens].Range.Start.Byte, "the file has more than %d words and signs", mostTokens)
+	}
 	depth, unary, braces := 0, 0, 0
+	chain, last := 0, hclsyntax.TokenNil // indices and dots that hang on one another
 	for _, t := range tokens {
 		switch t.Type {
 		case hclsyntax.TokenOBrace, hclsyntax.TokenOBrack, hclsyntax.TokenOParen, hclsyntax.TokenTemplateInterp, hclsyntax.TokenTemplateControl, hclsyntax.TokenOQuote:
@@ -127,6 +134,28 @@ func scan(file string, text []byte) *Problem {
 				return refuse("RCP-08", t.Range.Start.Byte, "a number of %d characters is too long", len(t.Bytes))
 			}
 		}
+		switch t.Type {
+		// Conditionals, loops in templates and splats never belong in a recipe, and
+		// the parser recurses on them.
+		case hclsyntax.TokenQuestion:
+			return refuse("RCP-04", t.Range.Start.Byte, "a conditional may not stand in a recipe")
+		case hclsyntax.TokenTemplateControl:
+			return refuse("RCP-04", t.Range.Start.Byte, "a directive may not stand in a text of a recipe")
+		case hclsyntax.TokenStar:
+			return refuse("RCP-04", t.Range.Start.Byte, "the sign * may not stand in a recipe; amounts are multiplied by times(amount, number)")
+		case hclsyntax.TokenDot:
+			chain++
+		case hclsyntax.TokenOBrack:
+			if last == hclsyntax.TokenCBrack {
+				chain++
+			}
+		case hclsyntax.TokenNewline, hclsyntax.TokenEqual, hclsyntax.TokenComma:
+			chain = 0
+		}
+		if chain > mostUnary {
+			return refuse("RCP-08", t.Range.Start.Byte, "more than %d indices in a row", mostUnary)
+		}
+		last = t.Type
 		if t.Type == hclsyntax.TokenOBrace {
 			if braces++; braces > mostBraces {
 				return refuse("RCP-08", t.Range.Start.Byte, "the file has more than %d blocks", mostBraces)

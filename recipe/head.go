@@ -75,6 +75,10 @@ func (r *reader) readHead(b *hclsyntax.Block) {
 	} else {
 		r.recipe.Batch = r.quantity(b.Body, "batch", Volume, Mass)
 	}
+	if q := r.recipe.Batch; q != nil && q.Value <= 0 {
+		r.problem("RCP-03", q.At, "a batch such as \"1000 L\"", "", "the batch is nothing")
+		r.recipe.Batch = nil
+	}
 	if n, ok := r.number(b.Body, "repeat"); ok {
 		if n < 1 || n > 1000 || n != float64(int(n)) {
 			r.problem("RCP-03", place(b.Body.Attributes["repeat"].Expr.Range()), "a whole number from 1 to 1000", "", "repeat is how often the recipe is run into its own heel")
@@ -83,7 +87,12 @@ func (r *reader) readHead(b *hclsyntax.Block) {
 		}
 	}
 	for _, f := range r.texts(b.Body, "rules") {
-		r.recipe.Rules = append(r.recipe.Rules, filepath.Join(r.dir, f.text))
+		path := filepath.Join(r.dir, filepath.FromSlash(f.text))
+		if filepath.IsAbs(f.text) || !inside(r.o.Root, path) {
+			r.problem("RCP-09", f.at, "", "", "%q lies outside the repository of the recipe", f.text)
+			continue
+		}
+		r.recipe.Rules = append(r.recipe.Rules, path)
 	}
 	for _, f := range r.texts(b.Body, "uses") {
 		r.readStock(r.dir, f.text, f.at)

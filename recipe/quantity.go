@@ -44,9 +44,12 @@ func parseQuantity(text string, want []Dimension) (Quantity, error) {
 	if i := strings.Index(body, " as "); i >= 0 {
 		rest := body[i+4:]
 		formula := rest
-		if j := strings.IndexAny(rest, " +±."); j >= 0 && strings.Contains(rest[j:], "+-") || strings.Contains(rest, "±") {
-			j = strings.IndexAny(rest, " +±")
-			formula = rest[:j]
+		for _, sign := range []string{"+-", "+/-", "±"} {
+			if j := strings.Index(rest, " "+sign); j >= 0 {
+				formula = rest[:j]
+			} else if j := strings.Index(rest, sign); j >= 0 && sign == "±" {
+				formula = rest[:j]
+			}
 		}
 		q.As = strings.TrimSpace(formula)
 		body = body[:i] + strings.Repeat(" ", 4+len(formula)) + rest[len(formula):]
@@ -102,11 +105,7 @@ func parseQuantity(text string, want []Dimension) (Quantity, error) {
 			if !ok || v < 0 {
 				return fail(at, len(text), "the tolerance %q is not a number of percent", t)
 			}
-			base := q.Value
-			if q.Dimension == Temperature {
-				base -= 273.15
-			}
-			q.Minus = math.Abs(base) * v / 100
+			q.Minus = math.Abs(value.raw*value.unit.factor) * v / 100 // of the number as written
 		} else {
 			d, err := scalar(tolerance, at, []Dimension{q.Dimension}, value.unit)
 			if err != nil {

@@ -65,16 +65,17 @@ type reader struct {
 	usedParameters map[string]bool
 	stock          bool // the file being read is a stock file
 	dir            string
+	liquors        map[string]*reader // recipes read for their liquor, by path: each once
 }
 
 func newReader(o Options, reading map[string]bool) *reader {
-	return &reader{o: o, recipe: &Recipe{Repeat: 1}, reading: reading, read: map[string]bool{}, usedParameters: map[string]bool{}}
+	return &reader{liquors: map[string]*reader{}, o: o, recipe: &Recipe{Repeat: 1}, reading: reading, read: map[string]bool{}, usedParameters: map[string]bool{}}
 }
 
 func (r *reader) problem(code string, at Range, expected, nearest, format string, args ...any) {
 	if len(r.problems) >= mostProblems {
 		if len(r.problems) == mostProblems {
-			r.problems = append(r.problems, Problem{Code: "RCP-08", Level: Stop, Fatal: true, Message: "further problems of this file are not listed", At: at})
+			r.problems = append(r.problems, Problem{Code: "RCP-08", Level: Stop, Fatal: true, Message: furtherProblems, At: at})
 		}
 		return
 	}
@@ -86,6 +87,8 @@ func (r *reader) advice(code string, level Level, at Range, format string, args 
 	r.problems = append(r.problems, Problem{Code: code, Level: level, Message: fmt.Sprintf(format, args...), At: at})
 }
 
+const furtherProblems = "further problems of this file are not listed"
+
 func place(h hcl.Range) Range {
 	return Range{h.Filename, h.Start.Line, h.Start.Column, h.End.Line, h.End.Column, h.Start.Byte, h.End.Byte}
 }
@@ -93,7 +96,7 @@ func place(h hcl.Range) Range {
 // parse guards and parses one file.
 func (r *reader) parse(path string, text []byte) (*hclsyntax.Body, bool) {
 	sum := sha256.Sum256(text)
-	r.recipe.Inputs = append(r.recipe.Inputs, Input{path, hex.EncodeToString(sum[:])})
+	r.addInput(Input{path, hex.EncodeToString(sum[:])})
 	text = []byte(strings.TrimPrefix(string(text), "\ufeff"))
 	if p := scan(path, text); p != nil {
 		r.problems = append(r.problems, *p)
@@ -131,6 +134,16 @@ func plainSyntax(d *hcl.Diagnostic) string {
 		return "a character that does not belong here"
 	}
 	return "expected a value here"
+}
+
+// addInput lists a file once.
+func (r *reader) addInput(in Input) {
+	for _, old := range r.recipe.Inputs {
+		if old == in {
+			return
+		}
+	}
+	r.recipe.Inputs = append(r.recipe.Inputs, in)
 }
 
 func (r *reader) readRecipe(path string, text []byte) {

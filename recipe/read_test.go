@@ -156,6 +156,13 @@ func TestHostileFiles(t *testing.T) {
 		"a zero byte":            "recipe \"a\x00b\" {}",
 		"NaN":                    "recipe \"x\" { batch = \"NaN L\" }",
 		"nested loops":           "recipe \"x\" { uses = [for a in [1,2] : [for b in [1,2] : b]] }",
+		"a chain of splats":      "recipe \"x\" { batch = a" + strings.Repeat("[*]", 300000) + " }",
+		"a chain of indices":     "recipe \"x\" { batch = a" + strings.Repeat("[0]", 300000) + " }",
+		"a chain of dots":        "recipe \"x\" { batch = a" + strings.Repeat(".b", 400000) + " }",
+		"conditionals":           "recipe \"x\" { batch = " + strings.Repeat("1?1:", 240000) + "1 }",
+		"directives":             "recipe \"x\" { batch = \"" + strings.Repeat("%{if 1}", 140000) + "\" }",
+		"loops in a key":         "recipe \"x\" {}\nwater \"w\" {\n  contents = { (join([for a in [1,2,3] : [for b in [1,2,3] : b]])) = \"1 mg/L\" }\n}\n",
+		"a sum without end":      "recipe \"x\" { batch = " + strings.Repeat("1+", 400000) + "1 }",
 		"an empty file":          "",
 		"a function calling all": "recipe \"x\" { batch = sum(" + strings.Repeat("\"1 L\",", 5000) + "\"1 L\") }",
 	}
@@ -176,6 +183,9 @@ func TestHostileFiles(t *testing.T) {
 			}
 			runtime.ReadMemStats(&after)
 			t.Logf("%v, %d MB allocated, first: %s", time.Since(begin).Round(time.Millisecond), (after.TotalAlloc-before.TotalAlloc)>>20, problems[0].Message)
+			if time.Since(begin) > 20*time.Second { // a bound against hanging, not a timing
+				t.Errorf("%v", time.Since(begin))
+			}
 			if after.Sys > 500<<20 {
 				t.Errorf("%d MB of memory", after.Sys>>20)
 			}
@@ -228,6 +238,32 @@ func TestFilesThatMayNotBeRead(t *testing.T) {
 		if _, problems := Load(path, Options{}); len(problems) != 1 || !strings.Contains(problems[0].Message, says) {
 			t.Errorf("%s: %+v", path, problems)
 		}
+	}
+}
+
+// A file that cannot be read hides what follows from it, and nothing else.
+func TestWhatFollowsIsNotTold(t *testing.T) {
+	text := "recipe \"x\" {\n  uses    = [\"none.stock.hcl\"]\n  rules   = [\"../../out.rules.hcl\"]\n  revison = \"A\"\n}\nstage \"s\" {\n  tank = \"T\"\n  hold { for = \"1 min\" }\n}\n"
+	_, problems := LoadBytes(filepath.Join(t.TempDir(), "x.recipe.hcl"), []byte(text), Options{})
+	var codes []string
+	for _, p := range problems {
+		codes = append(codes, p.Code+" "+strings.SplitN(p.Message, " ", 4)[2])
+	}
+	if len(problems) != 3 {
+		t.Errorf("%q", codes)
+	}
+}
+
+func TestToleranceInPercentIsOfTheNumberWritten(t *testing.T) {
+	for text, want := range map[string]float64{"298.15 K +- 1 %": 2.9815, "25 degC +- 10 %": 2.5, "90 degF +- 10 %": 5} {
+		q, err := ParseQuantity(text, Temperature)
+		if err != nil || q.Minus < want*0.999 || q.Minus > want*1.001 {
+			t.Errorf("%s: %g, %v", text, q.Minus, err)
+		}
+	}
+	q, err := ParseQuantity("5 mg/L as Ca^2+ +- 1 %", MassPerVolume)
+	if err != nil || q.As != "Ca^2+" || q.Minus == 0 {
+		t.Errorf("%+v %v", q, err)
 	}
 }
 

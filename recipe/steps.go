@@ -4,7 +4,6 @@ import (
 	"strings"
 
 	"github.com/hashicorp/hcl/v2/hclsyntax"
-	"github.com/zclconf/go-cty/cty"
 )
 
 // stepAttributes names what each step takes besides tank; a star marks what it
@@ -278,17 +277,17 @@ func (r *reader) fillSample(body *hclsyntax.Body, s *Step) {
 		switch e := a.Expr.(type) {
 		case *hclsyntax.ObjectConsExpr:
 			for _, item := range e.Items {
-				key, diagnostics := item.KeyExpr.Value(nil)
-				if diagnostics.HasErrors() || key.IsNull() || key.Type() != cty.String {
+				key, known := literalKey(item.KeyExpr)
+				if !known {
 					continue
 				}
-				switch key.AsString() {
+				switch key {
 				case "at_most":
 					limit.High = r.quantityOf(item.ValueExpr, a.Name, want)
 				case "at_least":
 					limit.Low = r.quantityOf(item.ValueExpr, a.Name, want)
 				default:
-					r.problem("RCP-02", place(item.KeyExpr.Range()), "at_most or at_least", Nearest(key.AsString(), []string{"at_most", "at_least"}), "a limit has no %q", key.AsString())
+					r.problem("RCP-02", place(item.KeyExpr.Range()), "at_most or at_least", Nearest(key, []string{"at_most", "at_least"}), "a limit has no %q", key)
 				}
 			}
 		default:

@@ -48,13 +48,13 @@ func (r *reader) contents(body *hclsyntax.Body) []Content {
 	var out []Content
 	seen := map[string]bool{}
 	for _, item := range object.Items {
-		key, diagnostics := item.KeyExpr.Value(nil)
+		key, known := literalKey(item.KeyExpr)
 		at := place(item.KeyExpr.Range())
-		if diagnostics.HasErrors() || key.IsNull() || key.Type() != cty.String {
+		if !known {
 			r.problem("RCP-03", at, "a name, in quotes when it holds other signs than letters and digits", "", "this is no name of a content")
 			continue
 		}
-		name := key.AsString()
+		name := key
 		if seen[name] {
 			r.problem("RCP-05", at, "", "", "%q stands twice in the contents", name)
 		}
@@ -62,6 +62,15 @@ func (r *reader) contents(body *hclsyntax.Body) []Content {
 		if q := r.quantityOf(item.ValueExpr, name, contentDimensions); q != nil {
 			out = append(out, Content{What: name, Amount: *q, At: at})
 		}
+	}
+	whole := 0.0
+	for _, c := range out {
+		if c.Amount.Dimension == MassFraction {
+			whole += c.Amount.Value
+		}
+	}
+	if whole > 1+1e-6 {
+		r.problem("RCP-03", place(a.Expr.Range()), "fractions that add up to 100 wt% at most; the rest is water", "", "the contents add up to %.4g wt%%", 100*whole)
 	}
 	return out
 }
@@ -196,11 +205,11 @@ func (r *reader) readHeadspace(body *hclsyntax.Body, t *Tank) {
 		t.Headspace.Kind, t.Headspace.PartialPa = "given", map[string]float64{}
 		gases := []string{"CO2", "NH3", "H2S", "SO2", "HCN"}
 		for _, item := range object.Items {
-			key, diagnostics := item.KeyExpr.Value(nil)
-			if diagnostics.HasErrors() || key.IsNull() || key.Type() != cty.String {
+			key, known := literalKey(item.KeyExpr)
+			if !known {
 				continue
 			}
-			name := key.AsString()
+			name := key
 			if !contains(gases, name) {
 				r.problem("RCP-02", place(item.KeyExpr.Range()), "one of "+strings.Join(gases, ", "), Nearest(name, gases), "there are no data of a gas %q", name)
 			}
@@ -264,16 +273,21 @@ func (r *reader) readLiquor(b *hclsyntax.Block) {
 		r.problem("RCP-08", fromAt, "", "", "recipes take liquor from each other more than 8 deep")
 		return
 	}
-	text, err := readFile(path)
-	if err != nil {
-		r.problem("RCP-01", fromAt, "", "", "%s", err)
-		return
+	inner := r.liquors[abs]
+	if inner == nil {
+		text, err := readFile(path)
+		if err != nil {
+			r.problem("RCP-01", fromAt, "", "", "%s", err)
+			return
+		}
+		o := r.o
+		o.Set = nil
+		inner = newReader(o, r.reading)
+		inner.liquors = r.liquors
+		inner.readRecipe(path, text)
+		inner.finish()
+		r.liquors[abs] = inner
 	}
-	o := r.o
-	o.Set = nil
-	inner := newReader(o, r.reading)
-	inner.readRecipe(path, text)
-	inner.finish()
 	for _, p := range inner.problems {
 		if p.Fatal {
 			r.problem("RCP-01", fromAt, "", "", "%q cannot be used: %s (line %d)", from, p.Message, p.At.Line)
@@ -289,7 +303,9 @@ func (r *reader) readLiquor(b *hclsyntax.Block) {
 		r.problem("RCP-02", at, "tank = one of "+strings.Join(names, ", "), Nearest(l.Tank, names), "%q has no tank %q", from, l.Tank)
 		return
 	}
-	r.recipe.Inputs = append(r.recipe.Inputs, l.Recipe.Inputs...)
+	for _, in := range l.Recipe.Inputs {
+		r.addInput(in)
+	}
 	r.recipe.Liquors = append(r.recipe.Liquors, l)
 }
 
@@ -308,11 +324,11 @@ func (r *reader) ownData(b *hclsyntax.Block, at Range) (reaction string, logK fl
 	if a := b.Body.Attributes["log10_k_at"]; a != nil {
 		if object, ok := a.Expr.(*hclsyntax.ObjectConsExpr); ok {
 			for _, item := range object.Items {
-				key, diagnostics := item.KeyExpr.Value(nil)
-				if diagnostics.HasErrors() || key.IsNull() || key.Type() != cty.String {
+				key, known := literalKey(item.KeyExpr)
+				if !known {
 					continue
 				}
-				t := r.quantityText(key.AsString(), place(item.KeyExpr.Range()), "log10_k_at", []Dimension{Temperature})
+				t := r.quantityText(key, place(item.KeyExpr.Range()), "log10_k_at", []Dimension{Temperature})
 				v := r.quantityOf(item.ValueExpr, "log10_k_at", []Dimension{Number})
 				if t != nil && v != nil {
 					table = append(table, TempPoint{t.Value, v.Value})

@@ -20,6 +20,7 @@ var units = []unit{
 	{"wt%", MassFraction, 0.01, 0, ""}, {"%", MassFraction, 0.01, 0, ""}, {"g/kg", MassFraction, 1e-3, 0, ""}, {"mg/kg", MassFraction, 1e-6, 0, ""}, {"ppm", MassFraction, 1e-6, 0, ""}, {"[ppm]", MassFraction, 1e-6, 0, ""}, {"ppb", MassFraction, 1e-9, 0, ""},
 	{"g/L", MassPerVolume, 1e-3, 0, ""}, {"g/l", MassPerVolume, 1e-3, 0, ""}, {"kg/m3", MassPerVolume, 1e-3, 0, ""}, {"mg/L", MassPerVolume, 1e-6, 0, ""}, {"mg/l", MassPerVolume, 1e-6, 0, ""}, {"ug/L", MassPerVolume, 1e-9, 0, ""}, {"µg/L", MassPerVolume, 1e-9, 0, ""}, {"g/m3", MassPerVolume, 1e-6, 0, ""},
 	{"kg/L", Density, 1, 0, ""}, {"g/mL", Density, 1, 0, ""}, {"g/cm3", Density, 1, 0, ""}, {"kg/l", Density, 1, 0, ""},
+	{"µmol/L", MolPerVolume, 1e-6, 0, ""}, {"°dH", MassPerVolume, 10e-6, 0, "CaO"}, {"°fH", MassPerVolume, 10e-6, 0, "CaCO3"}, {"°eH", MassPerVolume, 14.254e-6, 0, "CaCO3"},
 	{"dH", MassPerVolume, 10e-6, 0, "CaO"}, {"fH", MassPerVolume, 10e-6, 0, "CaCO3"}, {"eH", MassPerVolume, 14.254e-6, 0, "CaCO3"},
 	{"mol/L", MolPerVolume, 1, 0, ""}, {"mol/l", MolPerVolume, 1, 0, ""}, {"mmol/L", MolPerVolume, 1e-3, 0, ""}, {"mmol/l", MolPerVolume, 1e-3, 0, ""}, {"umol/L", MolPerVolume, 1e-6, 0, ""}, {"mol/m3", MolPerVolume, 1e-3, 0, ""},
 	{"mol/kg", Molality, 1, 0, ""}, {"mmol/kg", Molality, 1e-3, 0, ""},

@@ -106,6 +106,23 @@ func (r *reader) plain(expr hclsyntax.Expression, depth int) bool {
 	return refuse("a computed expression of this kind")
 }
 
+// literalKey is a key of an object that is written out: a word or a plain text.
+// Keys are never computed: an expression there would be run unseen.
+func literalKey(expr hclsyntax.Expression) (string, bool) {
+	if k, ok := expr.(*hclsyntax.ObjectConsKeyExpr); ok {
+		if word := hcl.ExprAsKeyword(k.Wrapped); word != "" && !k.ForceNonLiteral {
+			return word, true
+		}
+		expr = k.Wrapped
+	}
+	if t, ok := expr.(*hclsyntax.TemplateExpr); ok && len(t.Parts) == 1 {
+		if part, ok := t.Parts[0].(*hclsyntax.LiteralValueExpr); ok && part.Val.Type() == cty.String {
+			return part.Val.AsString(), true
+		}
+	}
+	return "", false
+}
+
 func (r *reader) parameterUse(t hcl.Traversal, at Range) bool {
 	if t.RootName() != "param" {
 		r.problem("RCP-02", at, "param[\"name\"], or a text in quotes", Nearest(t.RootName(), []string{"param"}), "%q stands for nothing", t.RootName())
@@ -139,12 +156,12 @@ func (r *reader) parameterUse(t hcl.Traversal, at Range) bool {
 }
 
 // baseUnit writes a quantity back in the unit in which it is held.
-var baseUnit = map[Dimension]string{Number: "", Mass: "kg", Volume: "L", Amount: "mol", MassFraction: "g/kg", MassPerVolume: "kg/L", MolPerVolume: "mol/L",
+var baseUnit = map[Dimension]string{Number: "", Mass: "kg", Volume: "L", Amount: "mol", MassFraction: "g/kg", MassPerVolume: "g/L", MolPerVolume: "mol/L",
 	Molality: "mol/kg", EqPerVolume: "eq/L", Temperature: "K", Duration: "s", Pressure: "Pa", Length: "m", Density: "kg/L"}
 
 func written(q Quantity) string {
 	scale := 1.0
-	if q.Dimension == MassFraction {
+	if q.Dimension == MassFraction || q.Dimension == MassPerVolume {
 		scale = 1000
 	}
 	s := strconv.FormatFloat(q.Value*scale, 'g', 15, 64)
@@ -195,8 +212,15 @@ func fold(f func(a, b float64) float64) function.Function {
 				if q.Dimension != total.Dimension || q.As != total.As {
 					return cty.NilVal, fmt.Errorf("%q and %q do not measure the same thing", args[0].AsString(), a.AsString())
 				}
-				total.Value = f(total.Value, q.Value)
-				total.Minus = math.Hypot(total.Minus, q.Minus)
+				one := total.Value
+				total.Value = f(one, q.Value)
+				switch total.Value { // the lesser or greater of two keeps its own tolerance
+				case one:
+				case q.Value:
+					total.Minus = q.Minus
+				default:
+					total.Minus = math.Hypot(total.Minus, q.Minus)
+				}
 			}
 			return cty.StringVal(written(total)), nil
 		},
