@@ -238,7 +238,7 @@ func (s *System) IndexUncertainty(st *State, phase int) float64 {
 	ionic := st.IonicStrength
 	model := 0.01 + 0.01*math.Sqrt(z2)*math.Sqrt(ionic)
 	if ionic > sitLimit {
-		model += 0.03 * math.Sqrt(z2) * (ionic - sitLimit)
+		model += 0.06 * math.Sqrt(z2) * (ionic - sitLimit)
 	}
 	return math.Hypot(s.Phases[phase].LogK.UncertaintyAt(st.TempK), model)
 }
